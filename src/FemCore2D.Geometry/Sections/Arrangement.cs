@@ -24,6 +24,32 @@ internal sealed class Arrangement
 
     /// <summary>The distance within which points count as one, in metres.</summary>
     public required double Tolerance { get; init; }
+
+    /// <summary>The exact area of a region, in square metres.</summary>
+    public double AreaOf(string region)
+    {
+        int index = RegionNames.IndexOf(region);
+        Point2D origin = Vertices[0];
+        double sum = 0;
+        foreach (ArrangedPiece piece in Pieces)
+        {
+            int side = (piece.LeftRegion == index ? 1 : 0) - (piece.RightRegion == index ? 1 : 0);
+            if (side != 0)
+            {
+                OutlinePiece line = PieceOf(piece);
+                sum += side * ((0.5 * (line.Start - origin).Cross(line.End - origin)) + line.SegmentArea);
+            }
+        }
+
+        return sum;
+    }
+
+    /// <summary>The length of a boundary, in metres.</summary>
+    public double LengthOf(string boundary) =>
+        Pieces.Where(p => p.Boundaries >= 0 && BoundarySets[p.Boundaries].Contains(boundary)).Sum(p => PieceOf(p).Length);
+
+    private OutlinePiece PieceOf(ArrangedPiece piece) =>
+        new(Vertices[piece.Start], Vertices[piece.End], piece.SweepRadians);
 }
 
 /// <summary>A straight or arc piece of an <see cref="Arrangement"/>.</summary>

@@ -1,0 +1,65 @@
+using System.Collections.Immutable;
+
+namespace FemCore2D.Geometry;
+
+/// <summary>That nothing which was drawn into a section is lost without a word.</summary>
+internal static class SectionChecks
+{
+    /// <summary>Throws where a shape is too small to be told from a point.</summary>
+    public static void ShapesAreResolved(List<PaintedShape> shapes, HashSet<int> drawnShapes, double tolerance)
+    {
+        for (int shape = 0; shape < shapes.Count; shape++)
+        {
+            if (!drawnShapes.Contains(shape))
+            {
+                throw new InvalidSectionException(
+                    $"The {shapes[shape].Shape} is too small for the section: lengths below {tolerance:G3} m count as nothing in it. Leave it out, or divide the section.");
+            }
+        }
+    }
+
+    /// <summary>Throws where a region was painted over, naming what covers it.</summary>
+    public static void RegionsAreSeen(
+        List<PaintedShape> shapes, ImmutableArray<string> regionNames, List<ArrangedPiece> pieces)
+    {
+        bool[] isSeen = new bool[regionNames.Length + 1];
+        foreach (ArrangedPiece piece in pieces)
+        {
+            isSeen[piece.LeftRegion + 1] = true;
+            isSeen[piece.RightRegion + 1] = true;
+        }
+
+        int hidden = Array.IndexOf(isSeen, false, 1);
+        if (hidden < 0)
+        {
+            return;
+        }
+
+        string name = regionNames[hidden - 1];
+        int first = shapes.FindIndex(s => s.Region == name);
+        IEnumerable<string> covers = shapes
+            .Skip(first + 1)
+            .Where(s => s.Region != name && s.Shape.Bounds.Meets(shapes[first].Shape.Bounds))
+            .Select(s => s.Region is null ? "a hole" : $"'{s.Region}'")
+            .Distinct();
+        throw new InvalidSectionException(
+            $"The region '{name}' at {shapes[first].Shape.Outer.Pieces[0].Start} is painted over completely by {string.Join(", ", covers)}. Fill it after them, or leave it out.");
+    }
+
+    /// <summary>Throws where a boundary has no piece left in or around the section.</summary>
+    public static void BoundariesAreSeen(
+        IReadOnlyList<string> boundaries, IReadOnlyList<ImmutableArray<string>> sets, List<ArrangedPiece> pieces)
+    {
+        HashSet<string> seen = new(
+            pieces.Where(p => p.Boundaries >= 0).Select(p => p.Boundaries).Distinct().SelectMany(i => sets[i]),
+            StringComparer.Ordinal);
+        foreach (string name in boundaries)
+        {
+            if (!seen.Contains(name))
+            {
+                throw new InvalidSectionException(
+                    $"The boundary '{name}' is painted over completely, or lies outside the section. Draw its outline after what covers it, or draw it as a sheet.");
+            }
+        }
+    }
+}
