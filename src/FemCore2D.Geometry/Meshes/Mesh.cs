@@ -12,11 +12,13 @@ namespace FemCore2D.Geometry;
 /// <para>An edge on a circular arc knows the angle that it sweeps, so that a curved map can put its points exactly
 /// on the arc.</para>
 /// </remarks>
-public sealed class Mesh
+public sealed partial class Mesh
 {
     private readonly MeshArrays arrays;
 
     internal Mesh(MeshArrays arrays) => this.arrays = arrays;
+
+    internal MeshArrays Arrays => arrays;
 
     /// <summary>The number of vertices.</summary>
     public int VertexCount => arrays.Vertices.Length;
@@ -106,6 +108,11 @@ public sealed class Mesh
     /// <summary>The vertex at a named fixed point.</summary>
     /// <exception cref="UnknownNameException">No fixed point has that name.</exception>
     public int VertexAt(string point) => arrays.PointVertices[IndexOf("point", point, arrays.PointNames)];
+
+    /// <inheritdoc/>
+    public override string ToString() => string.Create(
+        null,
+        $"Mesh of {VertexCount} vertices, {EdgeCount} edges, {TriangleCount} triangles and {QuadrilateralCount} quadrilaterals");
 
     private static int IndexOf(string kind, string name, ImmutableArray<string> names)
     {

@@ -16,11 +16,14 @@ internal sealed class MeshArrays
     /// <summary>Three a triangle, then four a quadrilateral.</summary>
     public required int[] CellEdges { get; init; }
 
-    /// <summary>Two an edge, the lower number first.</summary>
+    /// <summary>Two an edge, the lower number first; ascending in the lower number.</summary>
     public required int[] EdgeVertices { get; init; }
 
     /// <summary>Two an edge: left and right of its direction, -1 for none.</summary>
     public required int[] EdgeCells { get; init; }
+
+    /// <summary>The first edge whose lower vertex is the given one, and the number of edges at the end.</summary>
+    public required int[] FirstEdges { get; init; }
 
     /// <summary>One an edge, or empty when all edges are straight.</summary>
     public required double[] EdgeSweeps { get; init; }
@@ -35,4 +38,9 @@ internal sealed class MeshArrays
     public required ImmutableArray<string> PointNames { get; init; }
 
     public required int[] PointVertices { get; init; }
+
+    /// <summary>
+    /// The local edge at which each triangle is bisected next, or empty while no triangle has been bisected.
+    /// </summary>
+    public required byte[] BisectionEdges { get; init; }
 }

@@ -1,0 +1,89 @@
+namespace FemCore2D.Geometry;
+
+/// <summary>Checks of single cells: turned the right way, neither flat nor folded.</summary>
+internal static class CellChecks
+{
+    /// <summary>A corner with a smaller sine is as good as flat: its coordinates no longer tell which way it turns.</summary>
+    private const double FlatSine = 1e-10;
+
+    /// <summary>Checks that the outline of a cell goes counterclockwise once around a convex set of vertices.</summary>
+    /// <exception cref="InvalidMeshException">It does not; the message ends with the remedy.</exception>
+    public static void CheckUnfolded(Mesh mesh, int cell, string remedy)
+    {
+        ReadOnlySpan<int> corners = mesh.VerticesOf(cell);
+        ReadOnlySpan<Point2D> vertices = mesh.Vertices;
+        int turnedOver = 0;
+        int flat = 0;
+        for (int i = 0; i < corners.Length; i++)
+        {
+            Point2D corner = vertices[corners[i]];
+            Vector2D next = vertices[corners[i + 1 < corners.Length ? i + 1 : 0]] - corner;
+            Vector2D previous = vertices[corners[i > 0 ? i - 1 : corners.Length - 1]] - corner;
+            double cross = next.Cross(previous);
+            double limit = FlatSine * Math.Sqrt(next.LengthSquared * previous.LengthSquared);
+            turnedOver += cross < -limit ? 1 : 0;
+            flat += Math.Abs(cross) <= limit ? 1 : 0;
+        }
+
+        if (turnedOver + flat > 0)
+        {
+            string fault = turnedOver == corners.Length ? "lists its vertices clockwise"
+                : turnedOver > 0 ? "is not convex"
+                : "is flat at a corner";
+            throw Fault(mesh, cell, fault, remedy);
+        }
+
+        if (mesh.IsCurved(cell))
+        {
+            CheckArcs(mesh, cell, remedy);
+        }
+    }
+
+    /// <summary>A point well within a cell of moderate shape: the mean of its vertices.</summary>
+    public static Point2D MiddleOf(Mesh mesh, int cell)
+    {
+        ReadOnlySpan<int> corners = mesh.VerticesOf(cell);
+        Point2D first = mesh.Vertices[corners[0]];
+        Vector2D sum = default;
+        foreach (int corner in corners)
+        {
+            sum += mesh.Vertices[corner] - first;
+        }
+
+        return first + (sum / corners.Length);
+    }
+
+    /// <summary>An outline is simple when it turns less than a full turn at each corner and no two sides cross.</summary>
+    private static void CheckArcs(Mesh mesh, int cell, string remedy)
+    {
+        int count = mesh.EdgesOf(cell).Length;
+        for (int i = 0; i < count; i++)
+        {
+            EdgeCurve side = mesh.SideOf(cell, i);
+            EdgeCurve before = mesh.SideOf(cell, i > 0 ? i - 1 : count - 1).Reversed;
+            double angle = Math.Atan2(side.Chord.Cross(before.Chord), side.Chord.Dot(before.Chord))
+                + (0.5 * (side.SweepRadians - before.SweepRadians));
+            if (angle <= FlatSine || angle >= (2 * Math.PI) - FlatSine)
+            {
+                throw Fault(mesh, cell, $"is folded by the arcs that meet at {side.Start}", remedy);
+            }
+
+            for (int j = 0; j < i; j++)
+            {
+                if (CurveCrossing.Cross(side, mesh.SideOf(cell, j)))
+                {
+                    throw Fault(mesh, cell, "is crossed by one of its arcs", remedy);
+                }
+            }
+        }
+    }
+
+    private static InvalidMeshException Fault(Mesh mesh, int cell, string fault, string remedy)
+    {
+        Point2D place = MiddleOf(mesh, cell);
+        string kind = mesh.KindOf(cell) == CellKind.Triangle ? "triangle" : "quadrilateral";
+        return new InvalidMeshException(
+            $"Cell {cell}, a {kind} of region '{mesh.RegionNames[mesh.CellRegions[cell]]}' around {place}, {fault}. {remedy}",
+            place);
+    }
+}
