@@ -4,31 +4,127 @@ namespace FemCore2D.Elements;
 
 /// <summary>
 /// The maps from the reference cells to all cells of a mesh, of a chosen geometric degree: cells with an edge on an
-/// arc bend with it from degree 2 on, all others are straight.
+/// arc bend with it from degree 2 on, all others are straight. Immutable; safe to read from many threads.
 /// </summary>
-public sealed class CellMaps
+/// <remarks>
+/// Straight triangles are affine and straight quadrilaterals bilinear images of the reference cell; both need nothing
+/// but the vertices. Curved cells are isoparametric: polynomials through nodes of which those on an arc lie exactly on
+/// it; only their nodes are stored.
+/// </remarks>
+public sealed partial class CellMaps
 {
-    /// <summary>Prepares the maps of a mesh.</summary>
+    /// <summary>The highest degree of curved cells.</summary>
+    public const int MaximumDegree = 3;
+
+    private readonly CurvedCells curved;
+
+    /// <summary>Prepares the maps of a mesh and checks that none folds over.</summary>
     /// <param name="mesh">The mesh.</param>
     /// <param name="degree">The degree of the polynomials that describe curved cells: 1 (all straight) to 3.</param>
-    public CellMaps(Mesh mesh, int degree) => throw new NotImplementedException();
+    /// <exception cref="ArgumentOutOfRangeException">The degree is not one of these.</exception>
+    /// <exception cref="InvalidCellException">
+    /// The Jacobian of a cell is not positive: at a vertex of a straight cell, which decides for the whole of it, or at a
+    /// point of a close lattice in a curved cell.
+    /// </exception>
+    public CellMaps(Mesh mesh, int degree)
+    {
+        ArgumentNullException.ThrowIfNull(mesh);
+        ArgumentOutOfRangeException.ThrowIfLessThan(degree, 1);
+        ArgumentOutOfRangeException.ThrowIfGreaterThan(degree, MaximumDegree);
+        Mesh = mesh;
+        Degree = degree;
+        curved = new CurvedCells(mesh, degree);
+        CheckJacobians();
+    }
 
     /// <summary>The mesh.</summary>
-    public Mesh Mesh => throw new NotImplementedException();
+    public Mesh Mesh { get; }
 
     /// <summary>The degree of the maps of curved cells.</summary>
-    public int Degree => throw new NotImplementedException();
+    public int Degree { get; }
+
+    /// <summary>Whether a cell bends with an arc, so that its map is a polynomial of <see cref="Degree"/>.</summary>
+    public bool IsCurved(int cell) => curved.Contains(cell);
 
     /// <summary>Whether the map of a cell is affine (a straight triangle or a parallelogram), so that its Jacobian is the same everywhere.</summary>
-    public bool IsAffine(int cell) => throw new NotImplementedException();
+    public bool IsAffine(int cell) =>
+        !curved.Contains(cell) && (cell < Mesh.TriangleCount || Bilinear(cell).IsAffine);
 
     /// <summary>The place in the real cell of a point of the reference cell.</summary>
-    public Point2D PlaceOf(int cell, Point2D reference) => throw new NotImplementedException();
+    public Point2D PlaceOf(int cell, Point2D reference) => FirstVertexOf(cell) + OffsetOf(cell, reference);
+
+    /// <summary>The places in the real cell of many points of the reference cell.</summary>
+    /// <param name="cell">The cell.</param>
+    /// <param name="references">The points, in coordinates of the reference cell.</param>
+    /// <param name="places">Receives one place a point; at least as long.</param>
+    public void PlacesOf(int cell, ReadOnlySpan<Point2D> references, Span<Point2D> places)
+    {
+        places = places[..references.Length];
+        if (cell < Mesh.TriangleCount && !curved.Contains(cell))
+        {
+            (Point2D origin, Jacobian jacobian) = Affine(cell);
+            for (int i = 0; i < references.Length; i++)
+            {
+                places[i] = origin + jacobian.ToRealStep(new Vector2D(references[i].X, references[i].Y));
+            }
+
+            return;
+        }
+
+        for (int i = 0; i < references.Length; i++)
+        {
+            places[i] = PlaceOf(cell, references[i]);
+        }
+    }
 
     /// <summary>The derivative of the map at a point of the reference cell.</summary>
-    public Jacobian JacobianAt(int cell, Point2D reference) => throw new NotImplementedException();
+    public Jacobian JacobianAt(int cell, Point2D reference) =>
+        curved.Contains(cell) ? curved.JacobianAt(cell, Mesh.KindOf(cell), reference)
+        : cell < Mesh.TriangleCount ? Affine(cell).Jacobian
+        : Bilinear(cell).JacobianAt(reference);
 
-    /// <summary>Finds the reference point that a map sends to a place in (or near) a real cell.</summary>
-    /// <returns>Whether the iteration converged; the point may lie outside the reference cell.</returns>
-    public bool TryInvert(int cell, Point2D place, out Point2D reference) => throw new NotImplementedException();
+    /// <summary>The derivatives of the map at many points of the reference cell.</summary>
+    /// <param name="cell">The cell.</param>
+    /// <param name="references">The points, in coordinates of the reference cell.</param>
+    /// <param name="jacobians">Receives one derivative a point; at least as long.</param>
+    public void JacobiansAt(int cell, ReadOnlySpan<Point2D> references, Span<Jacobian> jacobians)
+    {
+        jacobians = jacobians[..references.Length];
+        if (cell < Mesh.TriangleCount && !curved.Contains(cell))
+        {
+            jacobians.Fill(Affine(cell).Jacobian);
+            return;
+        }
+
+        for (int i = 0; i < references.Length; i++)
+        {
+            jacobians[i] = JacobianAt(cell, references[i]);
+        }
+    }
+
+    private Point2D FirstVertexOf(int cell) => Mesh.Vertices[Mesh.VerticesOf(cell)[0]];
+
+    /// <summary>
+    /// The vector from the first vertex of a cell to the place of a point: all maps are computed relative to it, so that
+    /// small cells far from the origin keep their digits.
+    /// </summary>
+    private Vector2D OffsetOf(int cell, Point2D reference) =>
+        curved.Contains(cell) ? curved.OffsetOf(cell, Mesh.KindOf(cell), reference)
+        : cell < Mesh.TriangleCount ? Affine(cell).Jacobian.ToRealStep(new Vector2D(reference.X, reference.Y))
+        : Bilinear(cell).OffsetOf(reference);
+
+    private (Point2D Origin, Jacobian Jacobian) Affine(int triangle)
+    {
+        ReadOnlySpan<Point2D> vertices = Mesh.Vertices;
+        ReadOnlySpan<int> corners = Mesh.Triangles.Slice(3 * triangle, 3);
+        Point2D origin = vertices[corners[0]];
+        return (origin, new Jacobian(vertices[corners[1]] - origin, vertices[corners[2]] - origin));
+    }
+
+    private BilinearMap Bilinear(int cell)
+    {
+        ReadOnlySpan<Point2D> vertices = Mesh.Vertices;
+        ReadOnlySpan<int> corners = Mesh.VerticesOf(cell);
+        return new BilinearMap(vertices[corners[0]], vertices[corners[1]], vertices[corners[2]], vertices[corners[3]]);
+    }
 }

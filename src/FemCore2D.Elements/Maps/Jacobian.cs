@@ -10,6 +10,16 @@ public readonly record struct Jacobian(Vector2D Xi, Vector2D Eta)
     /// <summary>The ratio of real to reference area; positive in a valid cell.</summary>
     public double Determinant => Xi.Cross(Eta);
 
+    /// <summary>Turns a step in reference coordinates into the step in the plane.</summary>
+    public Vector2D ToRealStep(Vector2D reference) => (reference.X * Xi) + (reference.Y * Eta);
+
+    /// <summary>Turns a step in the plane into the step in reference coordinates.</summary>
+    public Vector2D ToReferenceStep(Vector2D real)
+    {
+        double inverse = 1 / Determinant;
+        return new Vector2D(inverse * real.Cross(Eta), inverse * Xi.Cross(real));
+    }
+
     /// <summary>Turns a gradient in reference coordinates into the gradient in real coordinates.</summary>
     public Vector2D ToRealGradient(Vector2D reference)
     {
