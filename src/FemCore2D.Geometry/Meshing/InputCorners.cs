@@ -1,0 +1,101 @@
+namespace FemCore2D.Geometry;
+
+/// <summary>The angles between the pieces that meet at a vertex of the arrangement, where they are small.</summary>
+internal sealed class InputCorners
+{
+    private const double SmallDegrees = 60.5;
+
+    private readonly MeshPlan plan;
+    private readonly double[] smallest;
+    private readonly int[] smallCorners;
+    private readonly Dictionary<(int, int), (int One, int Other)> cornersOfPieces = [];
+
+    public InputCorners(MeshPlan plan)
+    {
+        this.plan = plan;
+        smallest = new double[plan.Arrangement.Vertices.Length];
+        Array.Fill(smallest, double.PositiveInfinity);
+        List<(double Angle, int Piece, int Region)>[] departures = new List<(double, int, int)>[smallest.Length];
+        for (int piece = 0; piece < plan.Curves.Length; piece++)
+        {
+            ArrangedPiece arranged = plan.Arrangement.Pieces[piece];
+            Note(arranged.Start, piece, atEnd: false, arranged.LeftRegion);
+            Note(arranged.End, piece, atEnd: true, arranged.RightRegion);
+        }
+
+        for (int vertex = 0; vertex < departures.Length; vertex++)
+        {
+            if (departures[vertex] is not { Count: > 1 } around)
+                continue;
+            around.Sort();
+            for (int i = 0; i < around.Count; i++)
+            {
+                (double angle, int piece, int region) = around[i];
+                (double nextAngle, int nextPiece, _) = around[(i + 1) % around.Count];
+                double between = nextAngle - angle + (i + 1 < around.Count ? 0 : 2 * Math.PI);
+                double degrees = between * 180 / Math.PI;
+                if (degrees > SmallDegrees || piece == nextPiece)
+                    continue;
+                (int, int) key = (Math.Min(piece, nextPiece), Math.Max(piece, nextPiece));
+                cornersOfPieces[key] = cornersOfPieces.TryGetValue(key, out (int One, int Other) known)
+                    ? known with { Other = vertex }
+                    : (vertex, vertex);
+                if (region >= 0)
+                    smallest[vertex] = Math.Min(smallest[vertex], degrees);
+            }
+        }
+
+        smallCorners = [.. Enumerable.Range(0, smallest.Length).Where(IsSmall)];
+
+        void Note(int vertex, int piece, bool atEnd, int leftRegion)
+        {
+            Vector2D direction = plan.Curves[piece].Departure(atEnd);
+            (departures[vertex] ??= []).Add((Math.Atan2(direction.Y, direction.X), piece, leftRegion));
+        }
+    }
+
+    /// <summary>Whether pieces meet at the vertex at a small angle.</summary>
+    public bool IsSmall(int vertex) => vertex < smallest.Length && smallest[vertex] < SmallDegrees;
+
+    /// <summary>The smallest angle between pieces at the vertex, in degrees; infinite where none is small.</summary>
+    public double DegreesAt(int vertex) => vertex < smallest.Length ? smallest[vertex] : double.PositiveInfinity;
+
+    /// <summary>
+    /// Whether two points lie on two pieces that meet at a small angle, about equally far from their corner.
+    /// </summary>
+    public bool IsAcrossSmallCorner(int pieceA, Point2D a, int pieceB, Point2D b)
+    {
+        return pieceA >= 0 && pieceB >= 0 && pieceA != pieceB
+            && cornersOfPieces.TryGetValue((Math.Min(pieceA, pieceB), Math.Max(pieceA, pieceB)), out (int One, int Other) found)
+            && (AreEquallyFar(found.One, a, b) || AreEquallyFar(found.Other, a, b));
+    }
+
+    private bool AreEquallyFar(int vertex, Point2D a, Point2D b)
+    {
+        Point2D corner = plan.Arrangement.Vertices[vertex];
+        double toA = corner.DistanceTo(a);
+        double toB = corner.DistanceTo(b);
+        return Math.Abs(toA - toB) <= 0.05 * Math.Max(toA, toB);
+    }
+
+    /// <summary>The small corner nearest to a triangle, if it is about as near as the triangle is long; otherwise -1.</summary>
+    public int NearestSmall(Point2D a, Point2D b, Point2D c)
+    {
+        double reach = 4 * Math.Max(a.DistanceTo(b), Math.Max(b.DistanceTo(c), c.DistanceTo(a)));
+        int best = -1;
+        foreach (int vertex in smallCorners)
+        {
+            Point2D corner = PlaceOf(vertex);
+            double distance = Math.Min(corner.DistanceTo(a), Math.Min(corner.DistanceTo(b), corner.DistanceTo(c)));
+            if (distance < reach)
+            {
+                best = vertex;
+                reach = distance;
+            }
+        }
+
+        return best;
+    }
+
+    public Point2D PlaceOf(int vertex) => plan.Arrangement.Vertices[vertex];
+}

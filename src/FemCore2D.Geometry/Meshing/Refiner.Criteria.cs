@@ -1,0 +1,187 @@
+namespace FemCore2D.Geometry;
+
+/// <content>What is wrong with a triangle or a segment.</content>
+internal sealed unsafe partial class Refiner
+{
+    /// <summary>How much larger than that of a well-sized triangle a circumradius may be.</summary>
+    private const double LargestRatio = 1.4;
+
+    private const double SmallestBentSweep = 0.01;
+
+    private enum Verdict
+    {
+        Good,
+
+        /// <summary>The circumradius is too large for the wanted size.</summary>
+        Large,
+
+        /// <summary>An angle is too small.</summary>
+        Skinny,
+
+        /// <summary>With an edge bent to its arc, the triangle would overlap itself, or nearly so.</summary>
+        Bent,
+    }
+
+    /// <summary>A triangle seen from its shortest edge AB.</summary>
+    private struct Shape
+    {
+        public int Base;
+        public int VertexA;
+        public int VertexB;
+        public int VertexC;
+        public Point2D A;
+        public Point2D B;
+        public Point2D C;
+        public double ShortestSquared;
+        public bool IsSkinny;
+
+        public readonly Point2D Middle => A.Towards(B, 0.5);
+
+        /// <summary>How far before the middle of AB the circumcentre lies.</summary>
+        public readonly double CircumcentreDistance
+        {
+            get
+            {
+                Vector2D toApex = C - Middle;
+                return (toApex.LengthSquared - (ShortestSquared / 4)) / (2 * toApex.Dot(Normal));
+            }
+        }
+
+        public readonly Vector2D Normal => (B - A).LeftNormal / Math.Sqrt(ShortestSquared);
+    }
+
+    private Verdict Judge(int triangle, out Shape shape)
+    {
+        int first = 4 * triangle;
+        int v0 = mesh.Origin[first];
+        int v1 = mesh.Origin[first + 1];
+        int v2 = mesh.Origin[first + 2];
+        Point2D p0 = mesh.PointAt(v0);
+        Point2D p1 = mesh.PointAt(v1);
+        Point2D p2 = mesh.PointAt(v2);
+        Vector2D d0 = p1 - p0;
+        double l0 = d0.LengthSquared;
+        double l1 = (p2 - p1).LengthSquared;
+        double l2 = (p0 - p2).LengthSquared;
+        double cross = d0.Cross(p2 - p0);
+        double crossSquared = cross * cross;
+        double product = l0 * l1 * l2;
+        double shortest = Math.Min(l0, Math.Min(l1, l2));
+
+        // The circumradius squared is the product over four times the cross product squared; a third of the size
+        // squared is that of the wanted equilateral triangle.
+        double size = (sizes[v0] + sizes[v1] + sizes[v2]) * (1.0 / 3);
+        size = Math.Min(size, plan.RegionCaps[mesh.Origin[first + 3]]) * LargestRatio;
+        Verdict verdict = Verdict.Good;
+        bool isSkinny = crossSquared * shortest < sineSquared * product;
+        if (3 * product > 4 * crossSquared * size * size)
+            verdict = Verdict.Large;
+        else if (isSkinny)
+            verdict = Verdict.Skinny;
+        if (verdict == Verdict.Good || verdict == Verdict.Skinny)
+        {
+            if (IsTooBent(triangle))
+                verdict = Verdict.Bent;
+            if (verdict == Verdict.Good)
+            {
+                shape = default;
+                return verdict;
+            }
+        }
+
+        shape = shortest == l0
+            ? new Shape { IsSkinny = isSkinny, Base = first, VertexA = v0, VertexB = v1, VertexC = v2, A = p0, B = p1, C = p2, ShortestSquared = l0 }
+            : shortest == l1
+                ? new Shape { IsSkinny = isSkinny, Base = first + 1, VertexA = v1, VertexB = v2, VertexC = v0, A = p1, B = p2, C = p0, ShortestSquared = l1 }
+                : new Shape { IsSkinny = isSkinny, Base = first + 2, VertexA = v2, VertexB = v0, VertexC = v1, A = p2, B = p0, C = p1, ShortestSquared = l2 };
+        return verdict;
+    }
+
+    /// <summary>Whether a vertex lies inside the circle that has the segment for a diameter, on a side with cells.</summary>
+    private bool IsEncroached(int segment) =>
+        IsEncroachedFrom(segments.HalfEdgeAt(2 * segment)) || IsEncroachedFrom(segments.HalfEdgeAt((2 * segment) + 1));
+
+    private bool IsEncroachedFrom(int halfEdge)
+    {
+        if (halfEdge < 0 || mesh.RegionOf(halfEdge >> 2) < 0)
+            return false;
+        Point2D apex = mesh.PointAt(mesh.ApexOf(halfEdge));
+        return (mesh.PointAt(mesh.StartOf(halfEdge)) - apex).Dot(mesh.PointAt(mesh.EndOf(halfEdge)) - apex) < 0;
+    }
+
+    /// <summary>
+    /// Whether a skinny triangle only shows the small angle between two pieces: its shortest edge joins them at
+    /// equal distances from their corner, or its smallest angle is the corner itself.
+    /// </summary>
+    /// <remarks>G. L. Miller, S. E. Pav and N. J. Walkington, "When and why Delaunay refinement algorithms work",
+    /// International Journal of Computational Geometry and Applications 15 (2005).</remarks>
+    private bool IsForcedByCorner(in Shape shape)
+    {
+        if (mesh.IsConstrained(Triangulation.Next(shape.Base)) && mesh.IsConstrained(Triangulation.Previous(shape.Base)))
+            return true;
+        return corners.IsAcrossSmallCorner(
+            pieceOfVertex[shape.VertexA], shape.A, pieceOfVertex[shape.VertexB], shape.B);
+    }
+
+    /// <summary>
+    /// Whether an angle of the triangle is not clearly larger than the angles by which its arcs bend into it.
+    /// </summary>
+    private bool IsTooBent(int triangle)
+    {
+        int first = 4 * triangle;
+        if (mesh.Link[first] >= 0 && mesh.Link[first + 1] >= 0 && mesh.Link[first + 2] >= 0)
+            return false;
+        double b0 = InwardBend(first);
+        double b1 = InwardBend(first + 1);
+        double b2 = InwardBend(first + 2);
+        return (b0 > 0 || b1 > 0 || b2 > 0) && (IsTooBentAt(first, b2, b0) || IsTooBentAt(first + 1, b0, b1) || IsTooBentAt(first + 2, b1, b2));
+    }
+
+    private bool IsTooBentAt(int halfEdge, double bendBefore, double bendAfter)
+    {
+        double bend = Math.Max(bendBefore, 0) + Math.Max(bendAfter, 0);
+        if (bend < SmallestBentSweep / 2)
+            return false;
+        int before = Triangulation.Previous(halfEdge);
+        Point2D corner = mesh.PointAt(mesh.StartOf(halfEdge));
+        Vector2D one = mesh.PointAt(mesh.EndOf(halfEdge)) - corner;
+        Vector2D other = mesh.PointAt(mesh.StartOf(before)) - corner;
+        double angle = Math.Atan2(one.Cross(other), one.Dot(other));
+        double left = angle - bendBefore - bendAfter;
+
+        // Where two pieces touch each other the angle between them is nothing, however short the edges.
+        bool isTouch = mesh.IsConstrained(halfEdge) && mesh.IsConstrained(before) && left < 0.01;
+        return !isTouch && left < 0.25 * bend;
+    }
+
+    /// <summary>Half the sweep of the arc on a half-edge, positive when it bulges into the half-edge's triangle.</summary>
+    private double InwardBend(int halfEdge)
+    {
+        if (mesh.Link[halfEdge] >= 0)
+            return 0;
+        int side = ~mesh.Link[halfEdge];
+        double half = 0.5 * SweepOf(side >> 1);
+
+        // A positive sweep bulges to the right.
+        return (side & 1) == 0 ? -half : half;
+    }
+
+    private int MostBentSegment(int triangle)
+    {
+        int first = 4 * triangle;
+        int best = first;
+        for (int halfEdge = first + 1; halfEdge < first + 3; halfEdge++)
+        {
+            if (InwardBend(halfEdge) > InwardBend(best))
+                best = halfEdge;
+        }
+
+        return ~mesh.Link[best] >> 1;
+    }
+
+    private double SweepOf(int segment)
+    {
+        ref Segment part = ref segments[segment];
+        return part.Piece < 0 ? 0 : plan.Rings.Directed(part.Piece).Sweep * (part.LastFraction - part.FirstFraction);
+    }
+}
