@@ -82,7 +82,7 @@ internal static class OutlineChecks
         ImmutableArray<OutlinePiece> parts = Halved(pieces);
         PieceForm[] forms = [.. parts.Select(p => new PieceForm(p.Start, p.End, p.SweepRadians))];
         Box2D[] boxes = [.. parts.Select(p => p.Bounds.Widened(tolerance))];
-        BoxTree tree = new(boxes);
+        BoxIndex tree = new(boxes);
         List<int> hits = [];
         Span<Point2D> contacts = stackalloc Point2D[2];
         for (int i = 0; i < forms.Length; i++)

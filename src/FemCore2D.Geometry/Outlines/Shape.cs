@@ -129,7 +129,7 @@ public sealed class Shape
             }
         }
 
-        BoxTree tree = new([.. boxes]);
+        BoxIndex tree = new([.. boxes]);
         List<int> hits = [];
         Span<Point2D> contacts = stackalloc Point2D[2];
         for (int i = 0; i < forms.Count; i++)

@@ -23,7 +23,7 @@ internal sealed class PieceCutter
     private readonly IReadOnlyList<OutlinePiece> sources;
     private readonly double tolerance;
     private readonly PieceForm[] forms;
-    private readonly BoxTree tree;
+    private readonly BoxIndex tree;
     private readonly PointMerger vertices;
     private readonly int[] starts;
     private readonly int[] ends;
@@ -37,7 +37,7 @@ internal sealed class PieceCutter
         this.sources = sources;
         this.tolerance = tolerance;
         forms = [.. sources.Select(p => new PieceForm(p.Start, p.End, p.SweepRadians))];
-        tree = new BoxTree([.. sources.Select(p => p.Bounds.Widened(2 * tolerance))]);
+        tree = new BoxIndex([.. sources.Select(p => p.Bounds.Widened(2 * tolerance))]);
         vertices = new PointMerger(tolerance);
         starts = [.. sources.Select(p => vertices.Add(p.Start))];
         ends = [.. sources.Select(p => vertices.Add(p.End))];

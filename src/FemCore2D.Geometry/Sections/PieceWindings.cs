@@ -8,7 +8,7 @@ internal sealed class PieceWindings
     private readonly int[] turns;
     private readonly PieceForm[] forms;
     private readonly Point2D[] middles;
-    private readonly BoxTree tree;
+    private readonly BoxIndex tree;
     private readonly double farRight;
     private readonly List<int> hits = [];
     private readonly int[] left;
@@ -46,7 +46,7 @@ internal sealed class PieceWindings
             all = all.Union(boxes[i]);
         }
 
-        tree = new BoxTree(boxes);
+        tree = new BoxIndex(boxes);
         farRight = all.Upper.X;
     }
 

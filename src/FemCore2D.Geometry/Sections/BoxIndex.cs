@@ -1,7 +1,7 @@
 namespace FemCore2D.Geometry;
 
 /// <summary>A static tree of boxes, halved along the longer side of each group, that finds the boxes which meet another.</summary>
-internal sealed class BoxTree
+internal sealed class BoxIndex
 {
     private const int LeafSize = 8;
 
@@ -10,7 +10,7 @@ internal sealed class BoxTree
     private readonly Box2D[] nodes;
 
     /// <summary>Builds the tree over boxes that are known by their index.</summary>
-    public BoxTree(Box2D[] boxes)
+    public BoxIndex(Box2D[] boxes)
     {
         this.boxes = boxes;
         order = new int[boxes.Length];
