@@ -3,15 +3,16 @@ namespace FemCore2D.Geometry;
 /// <summary>Triangulates the vertices of the divided boundaries, with the segments as constraints and regions flooded.</summary>
 internal static unsafe class BoundaryTriangulation
 {
-    public static Triangulation Make(MeshPlan plan, BoundaryDivision division, CancellationToken cancellation)
+    public static Triangulation Make(
+        MeshPlan plan, BoundaryDivision division, List<Point2D> scaffold, CancellationToken cancellation)
     {
-        Triangulation result = new(division.Vertices.Count + 4);
-        foreach (Point2D vertex in division.Vertices)
+        int count = division.Vertices.Count + scaffold.Count;
+        Triangulation result = new(count + 4);
+        foreach (Point2D vertex in division.Vertices.Concat(scaffold))
         {
             result.AddVertex(vertex);
         }
 
-        int count = division.Vertices.Count;
         Vector2D margin = new(plan.Extent, plan.Extent);
         result.AddBox(plan.Low - margin, plan.High + margin);
         InsertVertices(result, count, cancellation);

@@ -24,7 +24,8 @@ public static class Mesher
         BoundaryDivision division = new(plan, field, cancellation);
 
         progress?.Report(new MeshingProgress(MeshingStage.Triangulating, 0, 0));
-        Triangulation triangulation = BoundaryTriangulation.Make(plan, division, cancellation);
+        Triangulation triangulation = BoundaryTriangulation.Make(
+            plan, division, Scaffold.Make(plan, field, cancellation), cancellation);
         double estimate = CellEstimate.Check(triangulation, plan, field, cancellation);
         triangulation.Reserve((int)Math.Min(estimate * 0.6, plan.Options.CellLimit) + triangulation.VertexCount);
 

@@ -65,7 +65,7 @@ internal sealed unsafe partial class Refiner
         for (int vertex = 0; vertex < mesh.VertexCount; vertex++)
         {
             sizes[vertex] = field.At(mesh.PointAt(vertex), double.PositiveInfinity);
-            pieceOfVertex[vertex] = vertex < division.PieceOfVertex.Count ? division.PieceOfVertex[vertex] : -1;
+            pieceOfVertex[vertex] = vertex < division.PieceOfVertex.Count ? division.PieceOfVertex[vertex] : -2;
         }
     }
 
