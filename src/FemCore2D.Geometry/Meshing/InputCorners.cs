@@ -4,11 +4,16 @@ namespace FemCore2D.Geometry;
 internal sealed class InputCorners
 {
     private const double SmallDegrees = 60.5;
+    private const double CuspDegrees = 0.25;
+
+    /// <summary>How wide the gap of a cusp may be, by its distance from the tip, to be left as it is.</summary>
+    private const double NarrowRatio = 0.035;
 
     private readonly MeshPlan plan;
     private readonly double[] smallest;
     private readonly int[] smallCorners;
     private readonly Dictionary<(int, int), (int One, int Other)> cornersOfPieces = [];
+    private readonly Dictionary<(int, int), int> cusps = [];
 
     public InputCorners(MeshPlan plan)
     {
@@ -40,6 +45,8 @@ internal sealed class InputCorners
                 cornersOfPieces[key] = cornersOfPieces.TryGetValue(key, out (int One, int Other) known)
                     ? known with { Other = vertex }
                     : (vertex, vertex);
+                if (degrees < CuspDegrees)
+                    cusps[key] = vertex;
                 if (region >= 0)
                     smallest[vertex] = Math.Min(smallest[vertex], degrees);
             }
@@ -70,6 +77,19 @@ internal sealed class InputCorners
             && (AreEquallyFar(found.One, a, b) || AreEquallyFar(found.Other, a, b));
     }
 
+    /// <summary>
+    /// Whether a place lies where two pieces that touch each other have hardly parted yet, so that no triangle
+    /// between them can have good angles.
+    /// </summary>
+    /// <param name="pieceA">A piece.</param>
+    /// <param name="pieceB">Another piece.</param>
+    /// <param name="place">The place.</param>
+    /// <param name="gap">The distance between the pieces there.</param>
+    public bool IsInCusp(int pieceA, int pieceB, Point2D place, double gap) =>
+        cusps.Count > 0 && pieceA >= 0 && pieceB >= 0 && pieceA != pieceB
+        && cusps.TryGetValue((Math.Min(pieceA, pieceB), Math.Max(pieceA, pieceB)), out int vertex)
+        && gap < NarrowRatio * PlaceOf(vertex).DistanceTo(place);
+
     private bool AreEquallyFar(int vertex, Point2D a, Point2D b)
     {
         Point2D corner = plan.Arrangement.Vertices[vertex];
@@ -81,16 +101,20 @@ internal sealed class InputCorners
     /// <summary>The small corner nearest to a triangle, if it is about as near as the triangle is long; otherwise -1.</summary>
     public int NearestSmall(Point2D a, Point2D b, Point2D c)
     {
-        double reach = 4 * Math.Max(a.DistanceTo(b), Math.Max(b.DistanceTo(c), c.DistanceTo(a)));
+        double longest = Math.Max(a.DistanceTo(b), Math.Max(b.DistanceTo(c), c.DistanceTo(a)));
+        double nearest = double.PositiveInfinity;
         int best = -1;
         foreach (int vertex in smallCorners)
         {
             Point2D corner = PlaceOf(vertex);
             double distance = Math.Min(corner.DistanceTo(a), Math.Min(corner.DistanceTo(b), corner.DistanceTo(c)));
-            if (distance < reach)
+
+            // Between the sides of an angle the cells are as long as the gap is wide, or longer.
+            double reach = longest * Math.Clamp(90 / smallest[vertex], 4, 60);
+            if (distance < reach && distance < nearest)
             {
                 best = vertex;
-                reach = distance;
+                nearest = distance;
             }
         }
 

@@ -83,7 +83,8 @@ public sealed class MeshReport
             AppendBar(text, string.Create(CultureInfo.InvariantCulture, $"{SizeClasses[i],5} {to}"), SizeHistogram[i]);
         }
 
-        foreach (ForcedAngle forced in ForcedAngles)
+        const int MostPlaces = 20;
+        foreach (ForcedAngle forced in ForcedAngles.Take(MostPlaces))
         {
             string cause = forced.InputDegrees is { } degrees
                 ? string.Create(CultureInfo.InvariantCulture, $"pieces meet at {degrees:F2}°")
@@ -91,6 +92,8 @@ public sealed class MeshReport
             text.Append(CultureInfo.InvariantCulture, $"forced at {forced.Place}: {cause}; {forced.Cells} cells with angles down to {forced.SmallestDegrees:F2}°\n");
         }
 
+        if (ForcedAngles.Length > MostPlaces)
+            text.Append(CultureInfo.InvariantCulture, $"and at {ForcedAngles.Length - MostPlaces} more places\n");
         return text.ToString();
     }
 

@@ -6,8 +6,35 @@ namespace FemCore2D.Geometry;
 /// as constraints, and refined until every cell has the wanted size and angle. The same section and options give
 /// the same mesh, bit for bit.
 /// </remarks>
+/// <example>
+/// <code>
+/// MeshingResult result = Mesher.Generate(
+///     section, MeshOptions.Default.WithSize(2e-4).WithBoundarySize("inner", 5e-5));
+/// Console.WriteLine(result.Report);
+/// </code>
+/// </example>
 public static class Mesher
 {
+    /// <summary>Meshes a cross-section.</summary>
+    /// <param name="section">The cross-section.</param>
+    /// <param name="options">Sizes, angles and divisions; null for the default ones.</param>
+    /// <param name="progress">Hears how far the mesh has come.</param>
+    /// <param name="cancellation">Ends the work early.</param>
+    /// <returns>The mesh and a report about it.</returns>
+    /// <exception cref="InvalidSectionException">The section cannot be meshed; the message tells why.</exception>
+    /// <exception cref="MeshingException">The sizes need more cells than the limit, paired boundaries do not match, or a division is impossible.</exception>
+    /// <exception cref="UnknownNameException">The options name a region, boundary or point that the section does not have.</exception>
+    /// <exception cref="OperationCanceledException">The work was cancelled.</exception>
+    public static MeshingResult Generate(
+        CrossSection section,
+        MeshOptions? options = null,
+        IProgress<MeshingProgress>? progress = null,
+        CancellationToken cancellation = default)
+    {
+        ArgumentNullException.ThrowIfNull(section);
+        return Generate(section.Arrange(), options ?? MeshOptions.Default, progress, cancellation);
+    }
+
     internal static MeshingResult Generate(
         Arrangement arrangement,
         MeshOptions options,

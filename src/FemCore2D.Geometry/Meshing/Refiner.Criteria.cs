@@ -105,8 +105,14 @@ internal sealed unsafe partial class Refiner
     {
         if (halfEdge < 0 || mesh.RegionOf(halfEdge >> 2) < 0)
             return false;
-        Point2D apex = mesh.PointAt(mesh.ApexOf(halfEdge));
-        return (mesh.PointAt(mesh.StartOf(halfEdge)) - apex).Dot(mesh.PointAt(mesh.EndOf(halfEdge)) - apex) < 0;
+        int vertex = mesh.ApexOf(halfEdge);
+        Point2D apex = mesh.PointAt(vertex);
+        Point2D start = mesh.PointAt(mesh.StartOf(halfEdge));
+        Point2D end = mesh.PointAt(mesh.EndOf(halfEdge));
+        if ((start - apex).Dot(end - apex) >= 0)
+            return false;
+        double gap = (start - apex).Cross(end - apex) / start.DistanceTo(end);
+        return !corners.IsInCusp(segments[~mesh.Link[halfEdge] >> 1].Piece, pieceOfVertex[vertex], apex, gap);
     }
 
     /// <summary>
@@ -119,8 +125,16 @@ internal sealed unsafe partial class Refiner
     {
         if (mesh.IsConstrained(Triangulation.Next(shape.Base)) && mesh.IsConstrained(Triangulation.Previous(shape.Base)))
             return true;
-        return corners.IsAcrossSmallCorner(
-            pieceOfVertex[shape.VertexA], shape.A, pieceOfVertex[shape.VertexB], shape.B);
+        int a = pieceOfVertex[shape.VertexA];
+        int b = pieceOfVertex[shape.VertexB];
+        int c = pieceOfVertex[shape.VertexC];
+        if (corners.IsAcrossSmallCorner(a, shape.A, b, shape.B))
+            return true;
+        if (a < 0 || b < 0 || c < 0 || (a == b && b == c))
+            return false;
+        double longest = Math.Max((shape.C - shape.A).Length, (shape.C - shape.B).Length);
+        double gap = (shape.B - shape.A).Cross(shape.C - shape.A) / longest;
+        return corners.IsInCusp(a, a == b ? c : b, shape.C, gap);
     }
 
     /// <summary>
