@@ -33,6 +33,7 @@ internal sealed class InputCorners
             if (departures[vertex] is not { Count: > 1 } around)
                 continue;
             around.Sort();
+            NoteCusps(around.ConvertAll(departure => (departure.Angle, departure.Piece)), vertex);
             for (int i = 0; i < around.Count; i++)
             {
                 (double angle, int piece, int region) = around[i];
@@ -45,8 +46,6 @@ internal sealed class InputCorners
                 cornersOfPieces[key] = cornersOfPieces.TryGetValue(key, out (int One, int Other) known)
                     ? known with { Other = vertex }
                     : (vertex, vertex);
-                if (degrees < CuspDegrees)
-                    cusps[key] = vertex;
                 if (region >= 0)
                     smallest[vertex] = Math.Min(smallest[vertex], degrees);
             }
@@ -58,6 +57,23 @@ internal sealed class InputCorners
         {
             Vector2D direction = plan.Curves[piece].Departure(atEnd);
             (departures[vertex] ??= []).Add((Math.Atan2(direction.Y, direction.X), piece, leftRegion));
+        }
+    }
+
+    /// <summary>Notes all pieces that leave in one direction: rounding alone decides which of them is next to which.</summary>
+    private void NoteCusps(List<(double Angle, int Piece)> around, int vertex)
+    {
+        for (int i = 0; i < around.Count; i++)
+        {
+            for (int k = i + 1; k < around.Count; k++)
+            {
+                double between = around[k].Angle - around[i].Angle;
+                if (Math.Min(between, (2 * Math.PI) - between) * 180 / Math.PI < CuspDegrees)
+                {
+                    (int one, int other) = (around[i].Piece, around[k].Piece);
+                    cusps[(Math.Min(one, other), Math.Max(one, other))] = vertex;
+                }
+            }
         }
     }
 
