@@ -5,29 +5,43 @@ namespace FemCore2D.Elements;
 /// <content>The check that no cell folds over.</content>
 public sealed partial class CellMaps
 {
-    /// <summary>Intervals along each reference coordinate between the points at which curved cells are checked.</summary>
-    private const int CheckIntervals = 6;
-
     private void CheckJacobians()
     {
         ReadOnlySpan<Point2D> corners = ReferenceCell.Vertices(CellKind.Quadrilateral);
-        ReadOnlySpan<Point2D> inTriangle = Lattice(CellKind.Triangle);
-        ReadOnlySpan<Point2D> inQuadrilateral = Lattice(CellKind.Quadrilateral);
         for (int cell = 0; cell < Mesh.CellCount; cell++)
         {
-            bool isTriangle = cell < Mesh.TriangleCount;
+            if (curved.Contains(cell))
+            {
+                continue;
+            }
 
             // The determinant of a straight cell is linear along each reference coordinate: its vertices decide.
-            ReadOnlySpan<Point2D> points = curved.Contains(cell)
-                ? isTriangle ? inTriangle : inQuadrilateral
-                : isTriangle ? corners[..1] : corners;
-            foreach (Point2D point in points)
+            foreach (Point2D corner in cell < Mesh.TriangleCount ? corners[..1] : corners)
             {
-                double determinant = JacobianAt(cell, point).Determinant;
+                double determinant = JacobianAt(cell, corner).Determinant;
                 if (!(determinant > 0 && double.IsFinite(determinant)))
                 {
-                    throw Fold(cell, point, determinant);
+                    throw Fold(cell, corner, determinant);
                 }
+            }
+        }
+
+        if (curved.Any)
+        {
+            CheckCurvedCells();
+        }
+    }
+
+    private void CheckCurvedCells()
+    {
+        PositivityCheck triangle = new(CellKind.Triangle, Degree);
+        PositivityCheck quadrilateral = new(CellKind.Quadrilateral, Degree);
+        for (int cell = 0; cell < Mesh.CellCount; cell++)
+        {
+            PositivityCheck check = cell < Mesh.TriangleCount ? triangle : quadrilateral;
+            if (curved.Contains(cell) && check.TryFindFold(new Determinant(this, cell), out Point2D fold))
+            {
+                throw Fold(cell, fold, JacobianAt(cell, fold).Determinant);
             }
         }
     }
@@ -45,18 +59,8 @@ public sealed partial class CellMaps
             place);
     }
 
-    private static Point2D[] Lattice(CellKind cell)
+    private readonly struct Determinant(CellMaps maps, int cell) : IDeterminant
     {
-        List<Point2D> points = [];
-        for (int j = 0; j <= CheckIntervals; j++)
-        {
-            int end = cell == CellKind.Triangle ? CheckIntervals - j : CheckIntervals;
-            for (int i = 0; i <= end; i++)
-            {
-                points.Add(new Point2D((double)i / CheckIntervals, (double)j / CheckIntervals));
-            }
-        }
-
-        return [.. points];
+        public double DeterminantAt(Point2D reference) => maps.JacobianAt(cell, reference).Determinant;
     }
 }

@@ -22,10 +22,7 @@ public sealed partial class CellMaps
     /// <param name="mesh">The mesh.</param>
     /// <param name="degree">The degree of the polynomials that describe curved cells: 1 (all straight) to 3.</param>
     /// <exception cref="ArgumentOutOfRangeException">The degree is not one of these.</exception>
-    /// <exception cref="InvalidCellException">
-    /// The Jacobian of a cell is not positive: at a vertex of a straight cell, which decides for the whole of it, or at a
-    /// point of a close lattice in a curved cell.
-    /// </exception>
+    /// <exception cref="InvalidCellException">The Jacobian is not positive throughout a cell, straight or curved.</exception>
     public CellMaps(Mesh mesh, int degree)
     {
         ArgumentNullException.ThrowIfNull(mesh);
@@ -60,27 +57,37 @@ public sealed partial class CellMaps
     public void PlacesOf(int cell, ReadOnlySpan<Point2D> references, Span<Point2D> places)
     {
         places = places[..references.Length];
-        if (cell < Mesh.TriangleCount && !curved.Contains(cell))
+        Point2D origin = FirstVertexOf(cell);
+        if (curved.Contains(cell))
         {
-            (Point2D origin, Jacobian jacobian) = Affine(cell);
+            CellKind kind = Mesh.KindOf(cell);
             for (int i = 0; i < references.Length; i++)
             {
-                places[i] = origin + jacobian.ToRealStep(new Vector2D(references[i].X, references[i].Y));
+                places[i] = origin + curved.OffsetOf(cell, kind, references[i]);
             }
-
-            return;
         }
-
-        for (int i = 0; i < references.Length; i++)
+        else if (cell < Mesh.TriangleCount)
         {
-            places[i] = PlaceOf(cell, references[i]);
+            Jacobian jacobian = Affine(cell);
+            for (int i = 0; i < references.Length; i++)
+            {
+                places[i] = origin + jacobian.ToRealStep(references[i] - Point2D.Origin);
+            }
+        }
+        else
+        {
+            BilinearMap map = Bilinear(cell);
+            for (int i = 0; i < references.Length; i++)
+            {
+                places[i] = origin + map.OffsetOf(references[i]);
+            }
         }
     }
 
     /// <summary>The derivative of the map at a point of the reference cell.</summary>
     public Jacobian JacobianAt(int cell, Point2D reference) =>
         curved.Contains(cell) ? curved.JacobianAt(cell, Mesh.KindOf(cell), reference)
-        : cell < Mesh.TriangleCount ? Affine(cell).Jacobian
+        : cell < Mesh.TriangleCount ? Affine(cell)
         : Bilinear(cell).JacobianAt(reference);
 
     /// <summary>The derivatives of the map at many points of the reference cell.</summary>
@@ -90,15 +97,25 @@ public sealed partial class CellMaps
     public void JacobiansAt(int cell, ReadOnlySpan<Point2D> references, Span<Jacobian> jacobians)
     {
         jacobians = jacobians[..references.Length];
-        if (cell < Mesh.TriangleCount && !curved.Contains(cell))
+        if (curved.Contains(cell))
         {
-            jacobians.Fill(Affine(cell).Jacobian);
-            return;
+            CellKind kind = Mesh.KindOf(cell);
+            for (int i = 0; i < references.Length; i++)
+            {
+                jacobians[i] = curved.JacobianAt(cell, kind, references[i]);
+            }
         }
-
-        for (int i = 0; i < references.Length; i++)
+        else if (cell < Mesh.TriangleCount)
         {
-            jacobians[i] = JacobianAt(cell, references[i]);
+            jacobians.Fill(Affine(cell));
+        }
+        else
+        {
+            BilinearMap map = Bilinear(cell);
+            for (int i = 0; i < references.Length; i++)
+            {
+                jacobians[i] = map.JacobianAt(references[i]);
+            }
         }
     }
 
@@ -110,15 +127,15 @@ public sealed partial class CellMaps
     /// </summary>
     private Vector2D OffsetOf(int cell, Point2D reference) =>
         curved.Contains(cell) ? curved.OffsetOf(cell, Mesh.KindOf(cell), reference)
-        : cell < Mesh.TriangleCount ? Affine(cell).Jacobian.ToRealStep(new Vector2D(reference.X, reference.Y))
+        : cell < Mesh.TriangleCount ? Affine(cell).ToRealStep(reference - Point2D.Origin)
         : Bilinear(cell).OffsetOf(reference);
 
-    private (Point2D Origin, Jacobian Jacobian) Affine(int triangle)
+    private Jacobian Affine(int triangle)
     {
         ReadOnlySpan<Point2D> vertices = Mesh.Vertices;
         ReadOnlySpan<int> corners = Mesh.Triangles.Slice(3 * triangle, 3);
         Point2D origin = vertices[corners[0]];
-        return (origin, new Jacobian(vertices[corners[1]] - origin, vertices[corners[2]] - origin));
+        return new Jacobian(vertices[corners[1]] - origin, vertices[corners[2]] - origin);
     }
 
     private BilinearMap Bilinear(int cell)

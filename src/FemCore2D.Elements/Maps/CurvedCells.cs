@@ -38,6 +38,8 @@ internal sealed class CurvedCells
         }
     }
 
+    public bool Any => nodes.Length > 0;
+
     public bool Contains(int cell) => firstNodes.Length > 0 && firstNodes[cell] >= 0;
 
     /// <summary>The vector from the first vertex to the place of a point.</summary>

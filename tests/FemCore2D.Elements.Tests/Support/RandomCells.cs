@@ -27,6 +27,16 @@ public sealed record RandomPoint(double U, double V)
         cell == CellKind.Quadrilateral || U + V <= 1 ? new Point2D(U, V) : new Point2D(1 - U, 1 - V);
 }
 
+/// <summary>The angles that the edges of a cell sweep, some of them zero, up to an eighth turn either way.</summary>
+public sealed record RandomBends(double First, double Second, double Third, double Fourth)
+{
+    internal MarkedEdge[] On(int corners) =>
+    [
+        .. new[] { First, Second, Third, Fourth }.Take(corners)
+            .Select((sweep, i) => new MarkedEdge(i, (i + 1) % corners, sweep, -1)),
+    ];
+}
+
 /// <summary>The generators of the property tests.</summary>
 public static class RandomCells
 {
@@ -40,6 +50,12 @@ public static class RandomCells
 
     public static Arbitrary<RandomPoint> Points() =>
         (from u in Unit from v in Unit select new RandomPoint(u, v)).ToArbitrary();
+
+    public static Arbitrary<RandomBends> Bends()
+    {
+        Gen<double> bend = Gen.Frequency((1, Gen.Constant(0.0)), (3, Signed.Select(s => s * Math.PI / 4)));
+        return (from a in bend from b in bend from c in bend from d in bend select new RandomBends(a, b, c, d)).ToArbitrary();
+    }
 
     public static Arbitrary<RandomTriangle> Triangles()
     {
