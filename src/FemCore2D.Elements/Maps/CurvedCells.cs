@@ -97,21 +97,24 @@ internal sealed class CurvedCells
     private (int[] FirstNodes, int NodeCount) NumberNodes(Mesh mesh)
     {
         int[] first = new int[mesh.CellCount];
+        Array.Fill(first, -1);
+        for (int edge = 0; edge < mesh.EdgeCount; edge++)
+        {
+            if (mesh.SweepRadiansOf(edge) != 0)
+            {
+                (int left, int right) = mesh.CellsOf(edge);
+                first[left >= 0 ? left : right] = 0;
+                first[right >= 0 ? right : left] = 0;
+            }
+        }
+
         int next = 0;
         for (int cell = 0; cell < first.Length; cell++)
         {
-            bool bends = false;
-            foreach (int edge in mesh.EdgesOf(cell))
+            if (first[cell] >= 0)
             {
-                bends |= mesh.SweepRadiansOf(edge) != 0;
-            }
-
-            first[cell] = bends ? next : -1;
-            if (bends)
-            {
-                next = checked(next + (mesh.KindOf(cell) == CellKind.Triangle
-                    ? triangle.UnknownCount
-                    : quadrilateral.UnknownCount));
+                first[cell] = next;
+                next = checked(next + (cell < mesh.TriangleCount ? triangle.UnknownCount : quadrilateral.UnknownCount));
             }
         }
 

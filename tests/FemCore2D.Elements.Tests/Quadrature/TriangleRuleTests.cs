@@ -59,8 +59,8 @@ public class TriangleRuleTests
     [Fact]
     public void RulesNeedNoMorePointsThanTheSmallestPublishedOnes()
     {
-        // Counts of fully symmetric rules with positive weights and inner points: Witherden and Vincent, 2015, table 4
-        // (degree 3 there and here shares 6 points with degree 4).
+        // Counts of fully symmetric rules with positive weights and inner points: Witherden and Vincent, 2015;
+        // degree 3 with six points: Strang and Fix, 1973.
         int[] smallest = [1, 1, 3, 6, 6, 7, 12, 15, 16, 19, 25, 28, 33, 37, 42, 49, 55, 60, 67, 73, 79];
         Assert.Equal(smallest, Enumerable.Range(0, 21).Select(d => QuadratureRule.For(CellKind.Triangle, d).Count));
     }
