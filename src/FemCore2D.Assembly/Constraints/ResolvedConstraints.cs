@@ -1,0 +1,374 @@
+using System.Collections.Immutable;
+using System.Numerics;
+using FemCore2D.Geometry;
+using FemCore2D.Sparse;
+
+namespace FemCore2D.Assembly;
+
+/// <summary>
+/// Conditions composed into rows <c>u = C v + g</c>: reduces a system to its free unknowns, expands their solution, and
+/// gives the reactions. Immutable, and safe to use from many threads.
+/// </summary>
+/// <remarks>
+/// The reduced system is <c>C^H K C v = C^H (f - K g)</c> plus the totals of floating targets, so a symmetric or
+/// Hermitian matrix stays so. Reactions are the same rows of <c>K u - f</c>, so they are as accurate as the energy.
+/// </remarks>
+/// <typeparam name="T">The number type: <see cref="double"/> or <see cref="Complex"/>.</typeparam>
+public sealed class ResolvedConstraints<T>
+    where T : unmanaged, INumberBase<T>
+{
+    private readonly ImmutableList<Condition<T>> conditions;
+    private readonly ConstraintRows<T> rows;
+    private readonly T[] offsets;
+    private readonly int[] owners;
+    private readonly int[] targets;
+    private readonly int[] floatColumns;
+    private readonly ImmutableArray<(int First, int Second, int Unknown)> touching;
+    private MatrixReduction<T>? reduction;
+
+    internal ResolvedConstraints(
+        NodeSpace space,
+        ImmutableList<Condition<T>> conditions,
+        ConstraintRows<T> rows,
+        T[] offsets,
+        int[] owners,
+        int[] targets,
+        int[] floatColumns,
+        ImmutableArray<(int First, int Second, int Unknown)> touching)
+    {
+        Space = space;
+        this.conditions = conditions;
+        this.rows = rows;
+        this.offsets = offsets;
+        this.owners = owners;
+        this.targets = targets;
+        this.floatColumns = floatColumns;
+        this.touching = touching;
+    }
+
+    /// <summary>The space.</summary>
+    public NodeSpace Space { get; }
+
+    /// <summary>The number of free unknowns.</summary>
+    public int FreeCount => rows.ColumnCount;
+
+    /// <summary>
+    /// Changes the value of a target with one fixed value, or the total of a floating one. Everything else is shared
+    /// with this object, so that many right-hand sides cost little.
+    /// </summary>
+    /// <param name="name">The boundary, region or point.</param>
+    /// <param name="value">The new value, or the new total.</param>
+    /// <exception cref="UnknownNameException">No such target has a fixed value or floats.</exception>
+    /// <exception cref="ArgumentOutOfRangeException">The value is not finite.</exception>
+    /// <exception cref="ConflictingConditionsException">A target that touches this one has another value.</exception>
+    public ResolvedConstraints<T> WithValue(string name, T value)
+    {
+        int index = IndexOf(name, condition => condition.Kind is ConditionKind.Fixed or ConditionKind.Floating);
+        if (!T.IsFinite(value))
+        {
+            throw new ArgumentOutOfRangeException(nameof(value), value, "The value of a condition must be finite.");
+        }
+
+        Condition<T> changed = conditions[index] with { Value = value };
+        ImmutableList<Condition<T>> all = conditions.SetItem(index, changed);
+        return new ResolvedConstraints<T>(
+            Space, all, rows, offsets, owners, targets, floatColumns, touching) { reduction = reduction };
+    }
+
+    /// <summary>The number of the free unknown that an unknown of the space follows, or -1 when it is fixed.</summary>
+    public int FreeUnknownOf(int unknown) => rows.Columns[unknown];
+
+    /// <summary>The reduced matrix <c>C^H K C</c>.</summary>
+    /// <param name="matrix">The full matrix of the space.</param>
+    /// <exception cref="ArgumentException">The matrix is not of the size of the space.</exception>
+    public SparseMatrix<T> Reduce(SparseMatrix<T> matrix)
+    {
+        MatrixReduction<T> plan = PlanFor(matrix);
+        SparseMatrix<T> reduced = new(plan.Pattern);
+        plan.Refill(matrix, reduced);
+        return reduced;
+    }
+
+    /// <summary>Refills a reduced matrix in place.</summary>
+    /// <param name="matrix">The full matrix, with the pattern of the one that was reduced first.</param>
+    /// <param name="reduced">A matrix that <see cref="Reduce(SparseMatrix{T})"/> made from it.</param>
+    /// <exception cref="ArgumentException">A matrix has another pattern.</exception>
+    public void Reduce(SparseMatrix<T> matrix, SparseMatrix<T> reduced)
+    {
+        ArgumentNullException.ThrowIfNull(reduced);
+        MatrixReduction<T> plan = PlanFor(matrix);
+        if (!ReferenceEquals(plan.Pattern, reduced.Pattern))
+        {
+            throw new ArgumentException(
+                "The reduced matrix was not made from a matrix of this pattern. Reduce without it first.",
+                nameof(reduced));
+        }
+
+        plan.Refill(matrix, reduced);
+    }
+
+    /// <summary>The reduced right-hand side <c>C^H (f - K g)</c> plus the totals of floating targets.</summary>
+    /// <param name="matrix">The full matrix.</param>
+    /// <param name="rightHandSide">The full right-hand side.</param>
+    /// <exception cref="ConflictingConditionsException">Targets that touch were given different values.</exception>
+    public T[] Reduce(SparseMatrix<T> matrix, ReadOnlySpan<T> rightHandSide)
+    {
+        ArgumentNullException.ThrowIfNull(matrix);
+        CheckLength(rightHandSide.Length, nameof(rightHandSide));
+        CheckTouching();
+        T[] given = new T[Space.UnknownCount];
+        AddGiven(given);
+        T[] remainder = matrix.Multiply(given);
+        T[] reduced = new T[FreeCount];
+        for (int i = 0; i < remainder.Length; i++)
+        {
+            int column = rows.Columns[i];
+            if (column >= 0)
+            {
+                T share = rightHandSide[i] - remainder[i];
+                reduced[column] += rows.Weights is null ? share : Scalar.Conjugate(rows.Weights[i]) * share;
+            }
+        }
+
+        for (int index = 0; index < floatColumns.Length; index++)
+        {
+            if (floatColumns[index] >= 0)
+            {
+                reduced[floatColumns[index]] += conditions[index].Value;
+            }
+        }
+
+        return reduced;
+    }
+
+    /// <summary>All unknowns <c>u = C v + g</c> from the free ones.</summary>
+    /// <param name="free">The free unknowns.</param>
+    /// <exception cref="ArgumentException">There are not as many as <see cref="FreeCount"/>.</exception>
+    public T[] Expand(ReadOnlySpan<T> free)
+    {
+        if (free.Length != FreeCount)
+        {
+            throw new ArgumentException(
+                $"There are {FreeCount} free unknowns, but {free.Length} numbers were given.", nameof(free));
+        }
+
+        T[] all = new T[Space.UnknownCount];
+        AddGiven(all);
+        for (int i = 0; i < all.Length; i++)
+        {
+            int column = rows.Columns[i];
+            if (column >= 0)
+            {
+                all[i] = rows.WeightOf(i) * free[column];
+            }
+        }
+
+        return all;
+    }
+
+    /// <summary>What is left over in each row, <c>K u - f</c>: zero but where conditions act.</summary>
+    /// <param name="matrix">The full matrix.</param>
+    /// <param name="rightHandSide">The full right-hand side.</param>
+    /// <param name="solution">All unknowns.</param>
+    public T[] Residual(SparseMatrix<T> matrix, ReadOnlySpan<T> rightHandSide, ReadOnlySpan<T> solution)
+    {
+        ArgumentNullException.ThrowIfNull(matrix);
+        CheckLength(rightHandSide.Length, nameof(rightHandSide));
+        T[] residual = matrix.Multiply(solution);
+        for (int i = 0; i < residual.Length; i++)
+        {
+            residual[i] -= rightHandSide[i];
+        }
+
+        return residual;
+    }
+
+    /// <summary>
+    /// The total that a condition contributes, such as a charge, a heat flow or a current: the sum of the residual over
+    /// its target. A node that two targets share counts with the one named first.
+    /// </summary>
+    /// <param name="name">The boundary, region or point with a fixed or floating value.</param>
+    /// <param name="residual">The residual of the solution.</param>
+    /// <exception cref="UnknownNameException">No such target has a fixed value or floats.</exception>
+    /// <exception cref="ArgumentException">The residual has another length.</exception>
+    public T Reaction(string name, ReadOnlySpan<T> residual)
+    {
+        CheckLength(residual.Length, nameof(residual));
+        int index = IndexOf(name, condition => condition.Kind != ConditionKind.Paired);
+        if (floatColumns[index] >= 0)
+        {
+            return SumOverMembers(rows.MembersOf(floatColumns[index]), residual);
+        }
+
+        T sum = T.Zero;
+        for (int i = 0; i < residual.Length; i++)
+        {
+            if (targets[i] == index)
+            {
+                sum += residual[i];
+            }
+            else if (targets[i] < 0 && owners[i] == index)
+            {
+                // The far side of a pair: its row belongs to the near side's with the pair's factor.
+                sum += Scalar.Conjugate(rows.WeightOf(i)) * residual[i];
+            }
+        }
+
+        return sum;
+    }
+
+    /// <summary>The value of a target with one fixed value, or the value that a floating one has taken.</summary>
+    /// <param name="name">The boundary, region or point.</param>
+    /// <param name="free">The solution for the free unknowns.</param>
+    /// <exception cref="UnknownNameException">No such target has one fixed value or floats.</exception>
+    public T ValueOf(string name, ReadOnlySpan<T> free)
+    {
+        int index = IndexOf(name, condition => condition.Kind is ConditionKind.Fixed or ConditionKind.Floating);
+        return floatColumns[index] >= 0 ? free[floatColumns[index]] : conditions[index].Value;
+    }
+
+    /// <summary>
+    /// Finds an unknown in a part of the mesh in which no value is fixed, so that a problem without a mass term has no
+    /// unique solution there.
+    /// </summary>
+    /// <param name="takesPart">Whether a cell takes part in the problem; all do when it is left out.</param>
+    /// <returns>An unknown in such a part, or -1 when there is none.</returns>
+    public int FindUnfixed(Func<int, bool>? takesPart = null)
+    {
+        // The fixed unknowns form the group behind the last free one.
+        int ground = FreeCount;
+        int[] parents = [.. Enumerable.Range(0, FreeCount + 1)];
+        Span<int> unknowns = stackalloc int[32];
+        for (int cell = 0; cell < Space.Mesh.CellCount; cell++)
+        {
+            if (takesPart is not null && !takesPart(cell))
+            {
+                continue;
+            }
+
+            int count = Space.Numbering.CellUnknowns(cell, unknowns);
+            int first = Root(Group(unknowns[0]));
+            for (int i = 1; i < count; i++)
+            {
+                int other = Root(Group(unknowns[i]));
+                if (other != first)
+                {
+                    // The ground stays root of its group.
+                    (int child, int root) = other == ground ? (first, other) : (other, first);
+                    parents[child] = root;
+                    first = root;
+                }
+            }
+        }
+
+        for (int cell = 0; cell < Space.Mesh.CellCount; cell++)
+        {
+            if (takesPart is null || takesPart(cell))
+            {
+                Space.Numbering.CellUnknowns(cell, unknowns);
+                if (Root(Group(unknowns[0])) != ground)
+                {
+                    return unknowns[0];
+                }
+            }
+        }
+
+        return -1;
+
+        int Group(int unknown) => rows.Columns[unknown] < 0 ? ground : rows.Columns[unknown];
+
+        int Root(int group)
+        {
+            while (parents[group] != group)
+            {
+                parents[group] = parents[parents[group]];
+                group = parents[group];
+            }
+
+            return group;
+        }
+    }
+
+    private T SumOverMembers(ReadOnlySpan<int> members, ReadOnlySpan<T> residual)
+    {
+        T sum = T.Zero;
+        foreach (int member in members)
+        {
+            sum += Scalar.Conjugate(rows.WeightOf(member)) * residual[member];
+        }
+
+        return sum;
+    }
+
+    private void AddGiven(T[] all)
+    {
+        for (int i = 0; i < all.Length; i++)
+        {
+            if (owners[i] >= 0)
+            {
+                Condition<T> owner = conditions[owners[i]];
+                all[i] = owner.Kind == ConditionKind.Fixed ? offsets[i] * owner.Value : offsets[i];
+            }
+        }
+    }
+
+    private void CheckTouching()
+    {
+        foreach ((int first, int second, int unknown) in touching)
+        {
+            Condition<T> a = conditions[first];
+            Condition<T> b = conditions[second];
+            if (a.Kind == ConditionKind.Fixed && b.Kind == ConditionKind.Fixed && a.Value != b.Value)
+            {
+                throw new ConflictingConditionsException(
+                    $"'{a.Name}' and '{b.Name}' touch at {Space.NodePlaces[unknown]}, but have the values {a.Value} and "
+                    + $"{b.Value}. Let the two agree, or leave a gap between them.");
+            }
+        }
+    }
+
+    private MatrixReduction<T> PlanFor(SparseMatrix<T> matrix)
+    {
+        ArgumentNullException.ThrowIfNull(matrix);
+        if (matrix.RowCount != Space.UnknownCount || matrix.ColumnCount != Space.UnknownCount)
+        {
+            throw new ArgumentException(
+                $"The space has {Space.UnknownCount} unknowns, but the matrix is {matrix.RowCount} by {matrix.ColumnCount}.",
+                nameof(matrix));
+        }
+
+        MatrixReduction<T>? known = Volatile.Read(ref reduction);
+        if (known is not null && ReferenceEquals(known.Full, matrix.Pattern))
+        {
+            return known;
+        }
+
+        var made = new MatrixReduction<T>(rows, matrix.Pattern);
+        Volatile.Write(ref reduction, made);
+        return made;
+    }
+
+    private void CheckLength(int length, string name)
+    {
+        if (length != Space.UnknownCount)
+        {
+            throw new ArgumentException(
+                $"The space has {Space.UnknownCount} unknowns, but {length} numbers were given.", name);
+        }
+    }
+
+    private int IndexOf(string name, Func<Condition<T>, bool> fits)
+    {
+        ArgumentNullException.ThrowIfNull(name);
+        for (int i = 0; i < conditions.Count; i++)
+        {
+            if (conditions[i].Name == name && fits(conditions[i]))
+            {
+                return i;
+            }
+        }
+
+        throw new UnknownNameException(
+            "condition on", name, conditions.Where(fits).Select(condition => condition.Name).Distinct());
+    }
+}
