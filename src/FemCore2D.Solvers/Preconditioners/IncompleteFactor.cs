@@ -5,13 +5,14 @@ using FemCore2D.Sparse;
 namespace FemCore2D.Solvers;
 
 /// <summary>
-/// The incomplete factors of a Hermitian matrix that is scaled to a unit diagonal: <c>L D L^H</c>, with the zeros of the
-/// matrix kept. Rows follow the order of elimination; columns are named by unknowns.
+/// The incomplete factors of a Hermitian matrix as <c>S^-1 L L^H S^-1</c> with a unit lower triangle L that keeps the
+/// zeros of the matrix, and a positive diagonal S. Rows follow the order of elimination; columns are named by unknowns.
 /// </summary>
 /// <remarks>
 /// The factors are computed in double precision and stored in single: they pass through memory at each iteration, and
 /// what is rounded away is far less than what is left out by being incomplete. The product stays Hermitian and
-/// positive definite, since any unit triangle and any positive diagonal are.
+/// positive definite, since any unit triangle and any positive diagonal give such a one. With the pivots in the outer
+/// diagonal, each step of a triangular solve is a single fused operation behind the one before.
 /// </remarks>
 internal sealed class IncompleteFactor<T>
     where T : unmanaged, INumberBase<T>
@@ -24,7 +25,6 @@ internal sealed class IncompleteFactor<T>
         Scale = scale;
         Shift = shift;
         Lower = new float[Width * (long)columns.Length];
-        InversePivots = new float[scale.Length];
     }
 
     /// <summary>The number of floats that make one number.</summary>
@@ -42,10 +42,7 @@ internal sealed class IncompleteFactor<T>
     /// <summary>The entries of L without its unit diagonal.</summary>
     public float[] Lower { get; }
 
-    /// <summary>For each place in the order the reciprocal of the entry of D.</summary>
-    public float[] InversePivots { get; }
-
-    /// <summary>For each unknown the factor that scales the matrix to a unit diagonal.</summary>
+    /// <summary>For each unknown the entry of S.</summary>
     public double[] Scale { get; }
 
     /// <summary>The multiple of the diagonal that was added to keep the pivots positive.</summary>
@@ -197,20 +194,22 @@ internal sealed class IncompleteFactor<T>
 
         public void Run(int block) => Rows(order.ChunkStarts[block], order.ChunkStarts[block + 1]);
 
+        /// <summary>Brings the factors into their final form; the pivots go into the outer diagonal.</summary>
         public void Pack(IncompleteFactor<T> factor)
         {
-            for (int i = 0; i < lower.Length; i++)
+            for (int place = 0; place < pivots.Length; place++)
             {
-                factor.Lower[i * (long)Width] = (float)Scalar.Real(lower[i]);
-                if (Scalar.IsComplex<T>())
+                pivots[place] = Math.Sqrt(pivots[place]);
+                factor.Scale[order.Order[place]] /= pivots[place];
+                for (int k = starts[place]; k < starts[place + 1]; k++)
                 {
-                    factor.Lower[(i * (long)Width) + 1] = (float)Scalar.Imaginary(lower[i]);
+                    T entry = Scalar.Scale(lower[k], pivots[order.Rank[columns[k]]] / pivots[place]);
+                    factor.Lower[k * (long)Width] = (float)Scalar.Real(entry);
+                    if (Scalar.IsComplex<T>())
+                    {
+                        factor.Lower[(k * (long)Width) + 1] = (float)Scalar.Imaginary(entry);
+                    }
                 }
-            }
-
-            for (int i = 0; i < pivots.Length; i++)
-            {
-                factor.InversePivots[i] = (float)(1 / pivots[i]);
             }
         }
 

@@ -70,17 +70,17 @@ internal sealed unsafe class TriangularSweep<T>(IncompleteFactor<T> factor) : IB
         }
     }
 
-    /// <summary>Solves with D and the conjugate transpose of L, and scales back, at some places of the order.</summary>
+    /// <summary>Solves with the conjugate transpose of L and scales the result, at some places of the order.</summary>
     private static void Backward(IncompleteFactor<T> factor, int first, int end, T* correction)
     {
         fixed (int* order = factor.Order.Order, starts = factor.Starts, columns = factor.Columns)
-        fixed (float* lower = factor.Lower, inversePivots = factor.InversePivots)
+        fixed (float* lower = factor.Lower)
         fixed (double* scale = factor.Scale)
         {
             for (int place = end - 1; place >= first; place--)
             {
                 int unknown = order[place];
-                T value = Scalar.Scale(correction[unknown], inversePivots[place]);
+                T value = correction[unknown];
                 int start = starts[place];
                 for (int k = starts[place + 1] - 1; k >= start; k--)
                 {
