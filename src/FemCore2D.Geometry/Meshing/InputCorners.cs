@@ -111,7 +111,7 @@ internal sealed class InputCorners
         Point2D corner = plan.Arrangement.Vertices[vertex];
         double toA = corner.DistanceTo(a);
         double toB = corner.DistanceTo(b);
-        return Math.Abs(toA - toB) <= 0.05 * Math.Max(toA, toB);
+        return Math.Abs(toA - toB) <= 1e-6 * Math.Max(toA, toB);
     }
 
     /// <summary>The small corner nearest to a triangle, if it is about as near as the triangle is long; otherwise -1.</summary>
