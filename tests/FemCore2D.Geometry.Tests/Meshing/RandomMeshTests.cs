@@ -9,7 +9,7 @@ public sealed class RandomMeshTests
     [Fact]
     public void MeshesOfRandomDrawingsAreValid() =>
         Check.One(
-            Config.QuickThrowOnFailure.WithMaxTest(60),
+            Config.QuickThrowOnFailure.WithMaxTest(40),
             Prop.ForAll(RandomArrangements.Fields(), fields => { MeshAudit.Generate(RandomArrangements.Draw(fields)); }));
 
     [Fact]
