@@ -32,9 +32,14 @@ internal sealed class BoundaryDivision
             }
         }
 
+        Corners = new InputCorners(plan);
+        EvenOutCusps();
         new ArcClearance(plan, fractions, cancellation).Establish();
+        EvenOutCusps();
         Collect();
     }
+
+    public InputCorners Corners { get; }
 
     /// <summary>The vertices of the arrangement first, then those within pieces.</summary>
     public List<Point2D> Vertices { get; } = [];
@@ -123,6 +128,50 @@ internal sealed class BoundaryDivision
         }
 
         return result;
+    }
+
+    /// <summary>Makes the edges at the tip of a cusp equally long.</summary>
+    private void EvenOutCusps()
+    {
+        foreach (int vertex in Corners.CuspVertices)
+        {
+            IReadOnlyList<(int Piece, bool AtEnd)> ends = Corners.CuspEndsAt(vertex);
+            double shortest = ends.Min(end => FirstChord(end.Piece, FromLast(end)));
+            foreach ((int Piece, bool AtEnd) end in ends)
+            {
+                if (plan.Divisions[end.Piece] == 0 && FirstChord(end.Piece, FromLast(end)) > shortest * (1 + 1e-9))
+                    CutAtDistance(end.Piece, FromLast(end), shortest);
+            }
+        }
+    }
+
+    private bool FromLast((int Piece, bool AtEnd) end) => end.AtEnd != plan.Rings.IsReversed(end.Piece);
+
+    private double FirstChord(int piece, bool fromLast)
+    {
+        PieceCurve curve = plan.Rings.Directed(piece);
+        List<double> cuts = fractions[piece];
+        return fromLast
+            ? curve.End.DistanceTo(curve.PointAt(cuts[^2]))
+            : curve.Start.DistanceTo(curve.PointAt(cuts[1]));
+    }
+
+    private void CutAtDistance(int piece, bool fromLast, double distance)
+    {
+        double fraction = plan.Rings.Directed(piece).FractionAtDistance(distance);
+        double cut = fromLast ? 1 - fraction : fraction;
+        foreach (int member in plan.Rings.Of(piece))
+        {
+            List<double> cuts = fractions[member];
+            int place = fromLast ? cuts.Count - 1 : 1;
+            cuts.Insert(place, cut);
+
+            // The cut that was the first moves on where it would leave an edge much shorter than its neighbours.
+            int old = fromLast ? place - 1 : place + 1;
+            int beyond = fromLast ? place - 2 : place + 2;
+            if (beyond >= 0 && beyond < cuts.Count && Math.Abs(cuts[old] - cut) < 0.5 * fraction)
+                cuts[old] = 0.5 * (cut + cuts[beyond]);
+        }
     }
 
     private double SizeAt(int piece, double fraction)

@@ -9,18 +9,21 @@ internal sealed class InputCorners
     /// <summary>How wide the gap of a cusp may be, by its distance from the tip, to be left as it is.</summary>
     private const double NarrowRatio = 0.035;
 
+    private readonly record struct Departure(double Angle, int Piece, bool AtEnd, int Region);
+
     private readonly MeshPlan plan;
     private readonly double[] smallest;
     private readonly int[] smallCorners;
     private readonly Dictionary<(int, int), (int One, int Other)> cornersOfPieces = [];
     private readonly Dictionary<(int, int), int> cusps = [];
+    private readonly SortedDictionary<int, List<(int Piece, bool AtEnd)>> cuspEnds = [];
 
     public InputCorners(MeshPlan plan)
     {
         this.plan = plan;
         smallest = new double[plan.Arrangement.Vertices.Length];
         Array.Fill(smallest, double.PositiveInfinity);
-        List<(double Angle, int Piece, int Region)>[] departures = new List<(double, int, int)>[smallest.Length];
+        List<Departure>[] departures = new List<Departure>[smallest.Length];
         for (int piece = 0; piece < plan.Curves.Length; piece++)
         {
             ArrangedPiece arranged = plan.Arrangement.Pieces[piece];
@@ -32,12 +35,12 @@ internal sealed class InputCorners
         {
             if (departures[vertex] is not { Count: > 1 } around)
                 continue;
-            around.Sort();
-            NoteCusps(around.ConvertAll(departure => (departure.Angle, departure.Piece)), vertex);
+            around.Sort((a, b) => (a.Angle, a.Piece).CompareTo((b.Angle, b.Piece)));
+            NoteCusps(around, vertex);
             for (int i = 0; i < around.Count; i++)
             {
-                (double angle, int piece, int region) = around[i];
-                (double nextAngle, int nextPiece, _) = around[(i + 1) % around.Count];
+                (double angle, int piece, _, int region) = around[i];
+                (double nextAngle, int nextPiece, _, _) = around[(i + 1) % around.Count];
                 double between = nextAngle - angle + (i + 1 < around.Count ? 0 : 2 * Math.PI);
                 double degrees = between * 180 / Math.PI;
                 if (degrees > SmallDegrees || piece == nextPiece)
@@ -56,12 +59,12 @@ internal sealed class InputCorners
         void Note(int vertex, int piece, bool atEnd, int leftRegion)
         {
             Vector2D direction = plan.Curves[piece].Departure(atEnd);
-            (departures[vertex] ??= []).Add((Math.Atan2(direction.Y, direction.X), piece, leftRegion));
+            (departures[vertex] ??= []).Add(new Departure(Math.Atan2(direction.Y, direction.X), piece, atEnd, leftRegion));
         }
     }
 
     /// <summary>Notes all pieces that leave in one direction: rounding alone decides which of them is next to which.</summary>
-    private void NoteCusps(List<(double Angle, int Piece)> around, int vertex)
+    private void NoteCusps(List<Departure> around, int vertex)
     {
         for (int i = 0; i < around.Count; i++)
         {
@@ -72,9 +75,19 @@ internal sealed class InputCorners
                 {
                     (int one, int other) = (around[i].Piece, around[k].Piece);
                     cusps[(Math.Min(one, other), Math.Max(one, other))] = vertex;
+                    NoteCuspEnd(around[i], vertex);
+                    NoteCuspEnd(around[k], vertex);
                 }
             }
         }
+    }
+
+    private void NoteCuspEnd(Departure departure, int vertex)
+    {
+        if (!cuspEnds.TryGetValue(vertex, out List<(int, bool)>? ends))
+            cuspEnds.Add(vertex, ends = []);
+        if (!ends.Contains((departure.Piece, departure.AtEnd)))
+            ends.Add((departure.Piece, departure.AtEnd));
     }
 
     /// <summary>Whether pieces meet at the vertex at a small angle.</summary>
@@ -106,12 +119,19 @@ internal sealed class InputCorners
         && cusps.TryGetValue((Math.Min(pieceA, pieceB), Math.Max(pieceA, pieceB)), out int vertex)
         && gap < NarrowRatio * PlaceOf(vertex).DistanceTo(place);
 
+    /// <summary>The ends of pieces that leave the vertex in one direction with another; empty where there is no cusp.</summary>
+    public IReadOnlyList<(int Piece, bool AtEnd)> CuspEndsAt(int vertex) =>
+        cuspEnds.TryGetValue(vertex, out List<(int, bool)>? ends) ? ends : [];
+
+    /// <summary>The vertices with cusps.</summary>
+    public IEnumerable<int> CuspVertices => cuspEnds.Keys;
+
     private bool AreEquallyFar(int vertex, Point2D a, Point2D b)
     {
         Point2D corner = plan.Arrangement.Vertices[vertex];
         double toA = corner.DistanceTo(a);
         double toB = corner.DistanceTo(b);
-        return Math.Abs(toA - toB) <= 0.05 * Math.Max(toA, toB);
+        return Math.Abs(toA - toB) <= 1e-6 * Math.Max(toA, toB);
     }
 
     /// <summary>The small corner nearest to a triangle, if it is about as near as the triangle is long; otherwise -1.</summary>

@@ -8,18 +8,19 @@ internal sealed unsafe partial class Refiner
 
     private const double SmallestBentSweep = 0.01;
 
-    private enum Verdict
+    [Flags]
+    private enum Faults
     {
-        Good,
+        None = 0,
 
         /// <summary>The circumradius is too large for the wanted size.</summary>
-        Large,
+        Large = 1,
 
         /// <summary>An angle is too small.</summary>
-        Skinny,
+        Skinny = 2,
 
         /// <summary>With an edge bent to its arc, the triangle would overlap itself, or nearly so.</summary>
-        Bent,
+        Bent = 4,
     }
 
     /// <summary>A triangle seen from its shortest edge AB.</summary>
@@ -33,7 +34,6 @@ internal sealed unsafe partial class Refiner
         public Point2D B;
         public Point2D C;
         public double ShortestSquared;
-        public bool IsSkinny;
 
         public readonly Point2D Middle => A.Towards(B, 0.5);
 
@@ -50,7 +50,7 @@ internal sealed unsafe partial class Refiner
         public readonly Vector2D Normal => (B - A).LeftNormal / Math.Sqrt(ShortestSquared);
     }
 
-    private Verdict Judge(int triangle, out Shape shape)
+    private Faults FaultsOf(int triangle)
     {
         int first = 4 * triangle;
         int v0 = mesh.Origin[first];
@@ -59,43 +59,57 @@ internal sealed unsafe partial class Refiner
         Point2D p0 = mesh.PointAt(v0);
         Point2D p1 = mesh.PointAt(v1);
         Point2D p2 = mesh.PointAt(v2);
-        Vector2D d0 = p1 - p0;
-        double l0 = d0.LengthSquared;
+        double l0 = (p1 - p0).LengthSquared;
         double l1 = (p2 - p1).LengthSquared;
         double l2 = (p0 - p2).LengthSquared;
-        double cross = d0.Cross(p2 - p0);
+        double cross = (p1 - p0).Cross(p2 - p0);
         double crossSquared = cross * cross;
         double product = l0 * l1 * l2;
-        double shortest = Math.Min(l0, Math.Min(l1, l2));
 
         // The circumradius squared is the product over four times the cross product squared; a third of the size
         // squared is that of the wanted equilateral triangle.
         double size = (sizes[v0] + sizes[v1] + sizes[v2]) * (1.0 / 3);
-        size = Math.Min(size, plan.RegionCaps[mesh.Origin[first + 3]]) * LargestRatio;
-        Verdict verdict = Verdict.Good;
-        bool isSkinny = crossSquared * shortest < sineSquared * product;
+        size = Math.Min(size, regionCaps[mesh.Origin[first + 3]]) * LargestRatio;
+        Faults faults = Faults.None;
         if (3 * product > 4 * crossSquared * size * size)
-            verdict = Verdict.Large;
-        else if (isSkinny)
-            verdict = Verdict.Skinny;
-        if (verdict == Verdict.Good || verdict == Verdict.Skinny)
+            faults |= Faults.Large;
+        if (crossSquared * Math.Min(l0, Math.Min(l1, l2)) < sineSquared * product)
+            faults |= Faults.Skinny;
+        if (hasArcs && IsTooBent(triangle))
+            faults |= Faults.Bent;
+        return faults;
+    }
+
+    private Shape ShapeOf(int triangle)
+    {
+        int shortest = 4 * triangle;
+        double least = LengthSquared(shortest);
+        for (int halfEdge = shortest + 1; halfEdge < (4 * triangle) + 3; halfEdge++)
         {
-            if (IsTooBent(triangle))
-                verdict = Verdict.Bent;
-            if (verdict == Verdict.Good)
+            double length = LengthSquared(halfEdge);
+            if (length < least)
             {
-                shape = default;
-                return verdict;
+                least = length;
+                shortest = halfEdge;
             }
         }
 
-        shape = shortest == l0
-            ? new Shape { IsSkinny = isSkinny, Base = first, VertexA = v0, VertexB = v1, VertexC = v2, A = p0, B = p1, C = p2, ShortestSquared = l0 }
-            : shortest == l1
-                ? new Shape { IsSkinny = isSkinny, Base = first + 1, VertexA = v1, VertexB = v2, VertexC = v0, A = p1, B = p2, C = p0, ShortestSquared = l1 }
-                : new Shape { IsSkinny = isSkinny, Base = first + 2, VertexA = v2, VertexB = v0, VertexC = v1, A = p2, B = p0, C = p1, ShortestSquared = l2 };
-        return verdict;
+        Shape shape = new()
+        {
+            Base = shortest,
+            VertexA = mesh.StartOf(shortest),
+            VertexB = mesh.EndOf(shortest),
+            VertexC = mesh.ApexOf(shortest),
+            ShortestSquared = least,
+        };
+        shape.A = mesh.PointAt(shape.VertexA);
+        shape.B = mesh.PointAt(shape.VertexB);
+        shape.C = mesh.PointAt(shape.VertexC);
+        return shape;
     }
+
+    private double LengthSquared(int halfEdge) =>
+        (mesh.PointAt(mesh.EndOf(halfEdge)) - mesh.PointAt(mesh.StartOf(halfEdge))).LengthSquared;
 
     /// <summary>Whether a vertex lies inside the circle that has the segment for a diameter, on a side with cells.</summary>
     private bool IsEncroached(int segment) =>

@@ -40,6 +40,8 @@ internal sealed unsafe partial class Refiner
         if (!CanSplit(segment))
             return false;
         double fraction = SplitFraction(segment);
+        int start = segments[segment].Start;
+        int end = segments[segment].End;
         int member = segment;
         int firstNew = -1;
         int lastNew = -1;
@@ -71,8 +73,26 @@ internal sealed unsafe partial class Refiner
         }
         while (member != segment);
         segments[lastNew].Mate = firstNew;
+        EvenOutCusp(start, segment);
+        EvenOutCusp(end, firstNew);
         return true;
     }
+
+    /// <summary>Splits the segments beside one at the tip of a cusp that has become shorter than they are.</summary>
+    private void EvenOutCusp(int vertex, int segment)
+    {
+        if (!hasArcs || corners.CuspEndsAt(vertex).Count == 0)
+            return;
+        double length = LengthOf(segment);
+        foreach (int other in cuspEnds.At(vertex))
+        {
+            if (other != segment && LengthOf(other) > 1.4 * length && segments[segment].Piece != segments[other].Piece)
+                TrySplit(other);
+        }
+    }
+
+    private double LengthOf(int segment) =>
+        mesh.PointAt(segments[segment].Start).DistanceTo(mesh.PointAt(segments[segment].End));
 
     /// <summary>
     /// Where on its piece a segment is split: in the middle, but at a distance of a power of two from a small
@@ -125,6 +145,7 @@ internal sealed unsafe partial class Refiner
         segments[segment].End = added;
         segments[segment].LastFraction = fraction;
         int second = segments.Add(whole with { Start = added, FirstFraction = fraction });
+        cuspEnds.Note(second);
         mesh.ConstrainInFan(segment, second, whole.Start, whole.End, leftRegion, rightRegion);
         foreach (int halfEdge in mesh.Rim)
         {

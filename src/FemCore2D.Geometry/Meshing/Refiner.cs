@@ -34,6 +34,9 @@ internal sealed unsafe partial class Refiner
     private readonly double edgeFloor;
     private readonly double sineSquared;
     private readonly double offCentre;
+    private readonly double[] regionCaps;
+    private readonly bool hasArcs;
+    private readonly CuspEnds cuspEnds;
     private double[] sizes;
     private int[] pieceOfVertex;
 
@@ -53,7 +56,10 @@ internal sealed unsafe partial class Refiner
         this.progress = progress;
         this.cancellation = cancellation;
         segments = mesh.Segments;
-        corners = new InputCorners(plan);
+        corners = division.Corners;
+        cuspEnds = new CuspEnds(plan, corners, segments);
+        regionCaps = plan.RegionCaps;
+        hasArcs = plan.Curves.Any(curve => curve.Sweep != 0);
         edgeFloor = 8 * plan.Arrangement.Tolerance;
         double angle = plan.Options.SmallestAngleDegrees * Math.PI / 180;
         sineSquared = Math.Sin(angle) * Math.Sin(angle);
@@ -126,7 +132,7 @@ internal sealed unsafe partial class Refiner
     /// <summary>Queues a triangle if something is to be done about it.</summary>
     private void Offer(int triangle)
     {
-        if (mesh.RegionOf(triangle) >= 0 && mesh.Link[(4 * triangle) + 3] == 0 && Judge(triangle, out _) != Verdict.Good)
+        if (mesh.RegionOf(triangle) >= 0 && mesh.Link[(4 * triangle) + 3] == 0 && FaultsOf(triangle) != Faults.None)
         {
             mesh.Link[(4 * triangle) + 3] = 1;
             triangleQueue.Enqueue(triangle);
@@ -135,27 +141,27 @@ internal sealed unsafe partial class Refiner
 
     private void Improve(int triangle)
     {
-        Verdict verdict = Judge(triangle, out Shape shape);
-        if (verdict == Verdict.Good)
+        Faults faults = FaultsOf(triangle);
+        if (faults == Faults.None)
             return;
-        if (verdict == Verdict.Bent)
+        Shape shape = ShapeOf(triangle);
+        if ((faults & Faults.Large) != 0 && TryInsert(triangle, PointForSize(triangle, shape), isForAngle: false))
+            return;
+        if ((faults & Faults.Bent) != 0 && TrySplit(MostBentSegment(triangle)))
         {
-            if (TrySplit(MostBentSegment(triangle)))
-                Offer(triangle);
+            Offer(triangle);
             return;
         }
 
-        if (verdict == Verdict.Large && TryInsert(triangle, PointForSize(triangle, shape), verdict))
-            return;
-        if (shape.IsSkinny && !IsForcedByCorner(shape))
-            TryInsert(triangle, PointForAngle(shape), Verdict.Skinny);
+        if ((faults & Faults.Skinny) != 0 && !IsForcedByCorner(shape))
+            TryInsert(triangle, PointForAngle(shape), isForAngle: true);
     }
 
     /// <summary>The place that makes a well-sized triangle with the shortest edge, not beyond the circumcentre.</summary>
     private Point2D PointForSize(int triangle, in Shape shape)
     {
         double size = 0.5 * (sizes[shape.VertexA] + sizes[shape.VertexB]);
-        size = Math.Min(size * (1 + (0.43 * (plan.Options.Growth - 1))), plan.RegionCaps[mesh.RegionOf(triangle)]);
+        size = Math.Min(size * (1 + (0.43 * (plan.Options.Growth - 1))), regionCaps[mesh.RegionOf(triangle)]);
         double wanted = Math.Max(size * size, 0.5 * shape.ShortestSquared);
         double distance = Math.Min(shape.CircumcentreDistance, Math.Sqrt(wanted - (shape.ShortestSquared / 4)));
         return shape.Middle + (distance * shape.Normal);
@@ -170,7 +176,7 @@ internal sealed unsafe partial class Refiner
 
     /// <summary>Inserts a vertex or, where it would come too near to segments, splits these.</summary>
     /// <returns>Whether anything was done.</returns>
-    private bool TryInsert(int triangle, Point2D point, Verdict verdict)
+    private bool TryInsert(int triangle, Point2D point, bool isForAngle)
     {
         if (!ContainsInCircle(triangle, point))
             return false;
@@ -209,7 +215,7 @@ internal sealed unsafe partial class Refiner
             else
             {
                 mayInsert = false;
-                if (verdict == Verdict.Skinny || length > 2 * wanted * wanted)
+                if (isForAngle || length > 2 * wanted * wanted)
                 {
                     mustSplit = true;
                     wantedSplits.Add(segment);
@@ -225,8 +231,8 @@ internal sealed unsafe partial class Refiner
             return true;
         }
 
-        double size = field.At(point, plan.RegionCaps[mesh.RegionOf(triangle)]);
-        double floor = verdict == Verdict.Large ? 0.55 * size : Math.Max(edgeFloor, EdgeFloorOfSize * size);
+        double size = field.At(point, regionCaps[mesh.RegionOf(triangle)]);
+        double floor = isForAngle ? Math.Max(edgeFloor, EdgeFloorOfSize * size) : 0.55 * size;
         if (!mayInsert || nearest < floor * floor)
             return false;
 
