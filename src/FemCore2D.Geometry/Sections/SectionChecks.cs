@@ -19,8 +19,15 @@ internal static class SectionChecks
     }
 
     /// <summary>Throws where a region was painted over, naming what covers it.</summary>
+    /// <param name="shapes">The shapes in the order of painting.</param>
+    /// <param name="regionNames">The names of all regions.</param>
+    /// <param name="pieces">The visible pieces.</param>
+    /// <param name="coversOf">Finds the shapes that show along the inside of the shapes of a region.</param>
     public static void RegionsAreSeen(
-        List<PaintedShape> shapes, ImmutableArray<string> regionNames, List<ArrangedPiece> pieces)
+        List<PaintedShape> shapes,
+        ImmutableArray<string> regionNames,
+        List<ArrangedPiece> pieces,
+        Func<string, IEnumerable<int>> coversOf)
     {
         bool[] isSeen = new bool[regionNames.Length + 1];
         foreach (ArrangedPiece piece in pieces)
@@ -37,10 +44,8 @@ internal static class SectionChecks
 
         string name = regionNames[hidden - 1];
         int first = shapes.FindIndex(s => s.Region == name);
-        IEnumerable<string> covers = shapes
-            .Skip(first + 1)
-            .Where(s => s.Region != name && s.Shape.Bounds.Meets(shapes[first].Shape.Bounds))
-            .Select(s => s.Region is null ? "a hole" : $"'{s.Region}'")
+        IEnumerable<string> covers = coversOf(name)
+            .Select(s => shapes[s].Region is string region ? $"'{region}'" : "a hole")
             .Distinct();
         throw new InvalidSectionException(
             $"The region '{name}' at {shapes[first].Shape.Outer.Pieces[0].Start} is painted over completely by {string.Join(", ", covers)}. Fill it after them, or leave it out.");
