@@ -98,6 +98,7 @@ internal sealed class Arranger
             AddPiece(piece);
         }
 
+        SectionChecks.RegionsClose(cutter.Vertices, arranged, tolerance);
         SectionChecks.ShapesAreResolved(shapes, drawnShapes, tolerance);
         SectionChecks.RegionsAreSeen(shapes, regionNames, arranged, CoversOf);
         SectionChecks.BoundariesAreSeen(section.Boundaries, sets.Sets, arranged);

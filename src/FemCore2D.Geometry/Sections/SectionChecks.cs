@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using System.Runtime.InteropServices;
 
 namespace FemCore2D.Geometry;
 
@@ -66,5 +67,34 @@ internal static class SectionChecks
                     $"The boundary '{name}' is painted over completely, or lies outside the section. Draw its outline after what covers it, or draw it as a sheet.");
             }
         }
+    }
+
+    /// <summary>Throws where the boundary of a region does not close, which lines at just about the tolerance can cause.</summary>
+    public static void RegionsClose(IReadOnlyList<Point2D> vertices, List<ArrangedPiece> pieces, double tolerance)
+    {
+        // A region's boundary, kept on its left, must leave each vertex as often as it arrives there.
+        Dictionary<(int Vertex, int Region), int> excess = [];
+        foreach (ArrangedPiece piece in pieces)
+        {
+            if (piece.LeftRegion != piece.RightRegion)
+            {
+                Count(piece.Start, piece.LeftRegion, 1);
+                Count(piece.End, piece.LeftRegion, -1);
+                Count(piece.End, piece.RightRegion, 1);
+                Count(piece.Start, piece.RightRegion, -1);
+            }
+        }
+
+        foreach (((int vertex, _), int count) in excess)
+        {
+            if (count != 0)
+            {
+                throw new InvalidSectionException(
+                    $"At {vertices[vertex]} lines pass each other at just about {tolerance:G3} m, the length below which they count as one. Draw them coincident, or farther apart.");
+            }
+        }
+
+        void Count(int vertex, int region, int change) =>
+            CollectionsMarshal.GetValueRefOrAddDefault(excess, (vertex, region), out _) += change;
     }
 }

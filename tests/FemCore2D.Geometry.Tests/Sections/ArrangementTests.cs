@@ -108,6 +108,18 @@ public class ArrangementTests
     }
 
     [Fact]
+    public void A_level_piece_may_be_the_chord_of_an_arc()
+    {
+        // The middle of the chord lies on the chord of the arc to the last digit.
+        CrossSection section = CrossSection.Empty
+            .Fill(Outline.Rectangle(new Point2D(-20, -20), 40, 40), "base")
+            .Fill(Outline.Polygon(new(1, -5), new(5, -5), new(1, -1)), "triangle")
+            .Fill(Outline.RingSector(new Point2D(3, -6), 2, 6, 0, 3), "sector");
+        Arrangement arrangement = Audited(section);
+        Assert.Contains(arrangement.Pieces, p => p.SweepRadians == 0 && ArrangementAudit.Line(arrangement, p).Midpoint.DistanceTo(new(3, -5)) < 1e-9);
+    }
+
+    [Fact]
     public void A_sheet_may_follow_an_arc_in_part()
     {
         CrossSection section = CrossSection.Empty

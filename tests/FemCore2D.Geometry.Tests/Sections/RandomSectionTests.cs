@@ -46,11 +46,31 @@ public class RandomSectionTests
         ShapeSpec[] filled = [.. shapes.Select(s => s with { Region = 0 })];
         double sum = section.Regions.Sum(section.AreaOf);
 
-        // The same section with what can be seen through the holes kept, and with all names alike.
+        // With the holes filled, or left out, nothing is missing.
         ShapeSpec[] unholed = [.. shapes.Where(s => s.Region != 3)];
         Assert.Equal(1600 + 4, ShapeLists.Paint(filled).Regions.Sum(ShapeLists.Paint(filled).AreaOf), 1e-9);
         Assert.Equal(1600 + 4, ShapeLists.Paint(unholed).Regions.Sum(ShapeLists.Paint(unholed).AreaOf), 1e-9);
         Assert.True(sum <= 1604 + 1e-9);
+    }
+
+    [Property(Arbitrary = [typeof(LatticeShapes)], MaxTest = 300)]
+    public void Lines_at_just_about_the_tolerance_are_arranged_soundly_or_refused(ShapeSpec[] shapes, int seed)
+    {
+        // Near coincidences from well below the tolerance, here 8e-8, to well above it.
+        Random random = new(seed);
+        double reach = Math.Pow(10, -random.Next(6, 12));
+        CrossSection section = ShapeLists.Paint(
+            shapes,
+            s => s.Moved(reach * new Vector2D(random.NextDouble() - 0.5, random.NextDouble() - 0.5)).Scaled(Point2D.Origin, 1 + (0.1 * reach * random.NextDouble())));
+        try
+        {
+            Arrangement arrangement = section.Arrange();
+            ArrangementAudit.RegionsAgreeRoundVertices(arrangement, [.. arrangement.Pieces.Select(p => ArrangementAudit.Line(arrangement, p))]);
+        }
+        catch (InvalidSectionException fault)
+        {
+            Assert.Contains("pass each other at just about", fault.Message, StringComparison.Ordinal);
+        }
     }
 
     private static void AssertAlike(CrossSection one, CrossSection other, double factor)
