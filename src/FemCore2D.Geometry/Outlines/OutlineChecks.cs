@@ -90,7 +90,9 @@ internal static class OutlineChecks
             tree.Query(boxes[i], hits);
             foreach (int j in hits)
             {
-                if (j > i && FindContact(forms[i], forms[j], tolerance, contacts) is Point2D place)
+                bool isNext = j == i + 1;
+                bool isBefore = i == 0 && j == forms.Length - 1;
+                if (j > i && FindContact(forms[i], forms[j], isNext, isBefore, tolerance, contacts) is Point2D place)
                 {
                     throw new InvalidSectionException(
                         $"The outline crosses or touches itself at {place}, where the {parts[i]} meets the {parts[j]}. Draw it as separate outlines, or cut an inner edge out as a hole.");
@@ -99,27 +101,29 @@ internal static class OutlineChecks
         }
     }
 
-    /// <summary>A point in which two pieces meet other than at an end that they share; <see langword="null"/> if there is none.</summary>
-    public static Point2D? FindContact(in PieceForm a, in PieceForm b, double tolerance, Span<Point2D> contacts)
+    /// <summary>A point in which two pieces meet other than at their joints; <see langword="null"/> if there is none.</summary>
+    /// <param name="a">A piece.</param>
+    /// <param name="b">Another piece.</param>
+    /// <param name="isNext">Whether the second piece goes on where the first ends.</param>
+    /// <param name="isBefore">Whether the second piece ends where the first begins.</param>
+    /// <param name="tolerance">The distance within which points count as one.</param>
+    /// <param name="contacts">Room for two points.</param>
+    public static Point2D? FindContact(
+        in PieceForm a, in PieceForm b, bool isNext, bool isBefore, double tolerance, Span<Point2D> contacts)
     {
         if (PieceContacts.Find(a, b, tolerance, contacts) > 0)
         {
             return contacts[0];
         }
 
-        bool sharesStart = a.Start == b.Start || a.Start == b.End;
-        bool sharesEnd = a.End == b.Start || a.End == b.End;
-        if (!sharesStart && PieceContacts.IsOn(b, a.Start, tolerance)) return a.Start;
-        if (!sharesEnd && PieceContacts.IsOn(b, a.End, tolerance)) return a.End;
-        if (b.Start != a.Start && b.Start != a.End && PieceContacts.IsOn(a, b.Start, tolerance)) return b.Start;
-        if (b.End != a.Start && b.End != a.End && PieceContacts.IsOn(a, b.End, tolerance)) return b.End;
-        if (sharesStart && sharesEnd)
-        {
-            Point2D halfway = a.AtParameter(0.5).Point;
-            return PieceContacts.IsOn(b, halfway, tolerance) ? halfway : null;
-        }
-
-        return null;
+        Point2D? place =
+            !isBefore && PieceContacts.IsOn(b, a.Start, tolerance) ? a.Start
+            : !isNext && PieceContacts.IsOn(b, a.End, tolerance) ? a.End
+            : !isNext && PieceContacts.IsOn(a, b.Start, tolerance) ? b.Start
+            : !isBefore && PieceContacts.IsOn(a, b.End, tolerance) ? b.End
+            : null;
+        Point2D halfway = a.AtParameter(0.5).Point;
+        return place ?? (isNext && isBefore && PieceContacts.IsOn(b, halfway, tolerance) ? halfway : null);
     }
 
     /// <summary>The pieces, with every arc above half a turn divided into two equal ones.</summary>

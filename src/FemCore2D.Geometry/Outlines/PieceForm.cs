@@ -63,13 +63,13 @@ internal readonly struct PieceForm
             return Chord.Dot(p - Start) / (Length * Length);
         }
 
-        // The angle at either end between the chord and the point is half the sweep that remains to the point.
-        Vector2D fromStart = p - Start;
-        Vector2D fromEnd = p - End;
-        double half = 0.5 * Sweep;
-        return fromStart.LengthSquared < fromEnd.LengthSquared
-            ? Math.Atan2((-Chord).Cross(fromEnd), (-Chord).Dot(fromEnd)) / half
-            : 1 + (Math.Atan2(Chord.Cross(fromStart), Chord.Dot(fromStart)) / half);
+        // A chord is the sine of half its sweep, to scale; the nearer end keeps that well away from a right angle.
+        double half = Math.Abs(0.5 * Sweep);
+        double fromStart = p.DistanceTo(Start);
+        double fromEnd = p.DistanceTo(End);
+        return fromStart < fromEnd
+            ? Math.Asin(Math.Min(1, fromStart / Length * Math.Abs(Sine))) / half
+            : 1 - (Math.Asin(Math.Min(1, fromEnd / Length * Math.Abs(Sine))) / half);
     }
 
     /// <summary>The point with parameter <paramref name="u"/> of the rational form, and the weight there.</summary>

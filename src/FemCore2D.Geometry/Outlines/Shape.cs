@@ -137,7 +137,8 @@ public sealed class Shape
             tree.Query(boxes[i], hits);
             foreach (int j in hits)
             {
-                if (owners[j] > owners[i] && OutlineChecks.FindContact(forms[i], forms[j], tolerance, contacts) is Point2D place)
+                if (owners[j] > owners[i]
+                    && OutlineChecks.FindContact(forms[i], forms[j], false, false, tolerance, contacts) is Point2D place)
                 {
                     throw new InvalidSectionException(
                         $"A hole of the shape meets its outer outline or another hole at {place}. Draw that part into the outer outline, or paint the shapes one over the other.");

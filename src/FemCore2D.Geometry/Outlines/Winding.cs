@@ -12,8 +12,10 @@ internal static class Winding
     /// <summary>What one piece adds to the winding number of a point that is not on it.</summary>
     public static int Of(in PieceForm piece, Point2D p)
     {
+        // On the chord itself the point counts as a little higher, as the ray does at the ends of chords.
         double cross = piece.Chord.Cross(p - piece.Start);
-        return Of(piece, p, cross > 0, IsBeyondChord(piece, p, cross > 0));
+        bool leftOfChord = cross > 0 || (cross == 0 && piece.Chord.X > 0);
+        return Of(piece, p, leftOfChord, IsBeyondChord(piece, p, leftOfChord));
     }
 
     /// <summary>What a piece adds to the winding number of a point that lies on it, moved a little to its left.</summary>

@@ -98,8 +98,9 @@ internal sealed class Arranger
             AddPiece(piece);
         }
 
+        SectionChecks.RegionsClose(cutter.Vertices, arranged, tolerance);
         SectionChecks.ShapesAreResolved(shapes, drawnShapes, tolerance);
-        SectionChecks.RegionsAreSeen(shapes, regionNames, arranged);
+        SectionChecks.RegionsAreSeen(shapes, regionNames, arranged, CoversOf);
         SectionChecks.BoundariesAreSeen(section.Boundaries, sets.Sets, arranged);
         CheckPoints();
         ArrangedLines lines = new(cutter, arranged, origins);
@@ -163,6 +164,25 @@ internal sealed class Arranger
     }
 
     private int RegionOf(int shape) => shape >= 0 && shapes[shape].Region is string region ? regionIndex[region] : -1;
+
+    private SortedSet<int> CoversOf(string region)
+    {
+        SortedSet<int> covers = [];
+        for (int piece = 0; piece < cutter.Pieces.Count; piece++)
+        {
+            foreach (PieceUse use in cutter.UsesOf(piece))
+            {
+                if (owners[use.Source] >= 0 && shapes[owners[use.Source]].Region == region)
+                {
+                    windings.CountAt(piece);
+                    bool isLeft = windings.Left(owners[use.Source]) != 0;
+                    covers.Add(windings.Touched.Where(s => (isLeft ? windings.Left(s) : windings.Right(s)) != 0).Max());
+                }
+            }
+        }
+
+        return covers;
+    }
 
     private void CheckPoints()
     {

@@ -17,33 +17,46 @@ internal readonly record struct PieceUse(int Source, int Direction);
 /// <remarks>
 /// The rule is one for crossings, T-junctions, touching and overlapping: the vertices are all ends, extra points and
 /// contacts of two pieces, with those closer than the tolerance united; each piece is then cut at every vertex on it.
+/// A piece that bends by a part of the tolerance to meet a vertex may come to lie across another one, so cutting is
+/// repeated until no piece bends.
 /// </remarks>
 internal sealed class PieceCutter
 {
-    private readonly IReadOnlyList<OutlinePiece> sources;
+    private const int MostRounds = 8;
+
     private readonly double tolerance;
-    private readonly PieceForm[] forms;
-    private readonly BoxIndex tree;
     private readonly PointMerger vertices;
     private readonly int[] starts;
     private readonly int[] ends;
-    private readonly List<CutPiece> pieces = [];
-    private readonly List<List<PieceUse>> uses = [];
     private readonly Dictionary<(int, int), List<int>> piecesBetween = [];
+    private List<CutPiece> pieces = [];
+    private List<List<PieceUse>> uses = [];
+    private PieceForm[] forms = [];
+    private BoxIndex tree = new([]);
 
     /// <summary>Cuts pieces of at most half a turn each, at each other and at extra points.</summary>
     public PieceCutter(IReadOnlyList<OutlinePiece> sources, IReadOnlyList<Point2D> extraPoints, double tolerance)
     {
-        this.sources = sources;
         this.tolerance = tolerance;
-        forms = [.. sources.Select(p => new PieceForm(p.Start, p.End, p.SweepRadians))];
-        tree = new BoxIndex([.. sources.Select(p => p.Bounds.Widened(2 * tolerance))]);
         vertices = new PointMerger(tolerance);
         starts = [.. sources.Select(p => vertices.Add(p.Start))];
         ends = [.. sources.Select(p => vertices.Add(p.End))];
         ExtraVertices = [.. extraPoints.Select(vertices.Add)];
-        AddContacts();
-        Cut();
+        for (int i = 0; i < sources.Count; i++)
+        {
+            if (starts[i] != ends[i])
+            {
+                pieces.Add(new CutPiece(starts[i], ends[i], sources[i].SweepRadians));
+                uses.Add([new PieceUse(i, 1)]);
+            }
+        }
+
+        double bent = double.PositiveInfinity;
+        for (int round = 0; round < MostRounds && bent > 1e-3 * tolerance; round++)
+        {
+            AddContacts();
+            bent = Cut();
+        }
     }
 
     public IReadOnlyList<Point2D> Vertices => vertices.Points;
@@ -61,27 +74,29 @@ internal sealed class PieceCutter
 
     private void AddContacts()
     {
+        forms = [.. pieces.Select(FormOf)];
+        Box2D[] boxes = [.. pieces.Select(p => new OutlinePiece(Vertices[p.Start], Vertices[p.End], p.Sweep).Bounds)];
+        tree = new BoxIndex([.. boxes.Select(b => b.Widened(2 * tolerance))]);
         List<int> hits = [];
         Span<Point2D> contacts = stackalloc Point2D[2];
         for (int i = 0; i < forms.Length; i++)
         {
-            tree.Query(sources[i].Bounds, hits);
+            tree.Query(boxes[i], hits);
             foreach (int j in hits)
             {
-                if (j > i && forms[i].Length > 0 && forms[j].Length > 0)
+                int count = j > i ? PieceContacts.Find(forms[i], forms[j], tolerance, contacts) : 0;
+                for (int c = 0; c < count; c++)
                 {
-                    int count = PieceContacts.Find(forms[i], forms[j], tolerance, contacts);
-                    for (int c = 0; c < count; c++)
-                    {
-                        vertices.Add(contacts[c]);
-                    }
+                    vertices.Add(contacts[c]);
                 }
             }
         }
     }
 
-    private void Cut()
+    /// <summary>Cuts every piece at the vertices on it and returns the farthest that one bends to meet them.</summary>
+    private double Cut()
     {
+        double bent = 0;
         List<(double Fraction, int Vertex)>?[] cuts = new List<(double, int)>?[forms.Length];
         List<int> hits = [];
         for (int v = 0; v < Vertices.Count; v++)
@@ -91,38 +106,38 @@ internal sealed class PieceCutter
             foreach (int i in hits)
             {
                 // A contact may have moved by the tolerance to the vertex that stands for it.
-                if (v != starts[i] && v != ends[i]
-                    && Math.Abs(forms[i].Side(place)) <= 2 * tolerance * forms[i].Length && forms[i].Spans(place))
+                double distance = Math.Abs(forms[i].DistanceTo(place));
+                if (v != pieces[i].Start && v != pieces[i].End && distance <= 2 * tolerance && forms[i].Spans(place))
                 {
                     (cuts[i] ??= []).Add((forms[i].FractionOf(place), v));
+                    bent = Math.Max(bent, distance);
                 }
             }
         }
 
-        for (int i = 0; i < forms.Length; i++)
+        (List<CutPiece> whole, List<List<PieceUse>> usesOfWhole) = (pieces, uses);
+        (pieces, uses) = ([], []);
+        piecesBetween.Clear();
+        for (int i = 0; i < whole.Count; i++)
         {
             double fraction = 0;
-            int vertex = starts[i];
+            int vertex = whole[i].Start;
             cuts[i]?.Sort();
             foreach ((double nextFraction, int next) in cuts[i] ?? [])
             {
-                AddPart(i, vertex, next, nextFraction - fraction);
+                AddPart(new CutPiece(vertex, next, (nextFraction - fraction) * whole[i].Sweep), usesOfWhole[i]);
                 (fraction, vertex) = (nextFraction, next);
             }
 
-            AddPart(i, vertex, ends[i], 1 - fraction);
+            AddPart(new CutPiece(vertex, whole[i].End, (1 - fraction) * whole[i].Sweep), usesOfWhole[i]);
         }
+
+        return bent;
     }
 
-    private void AddPart(int source, int start, int end, double share)
+    private void AddPart(CutPiece part, List<PieceUse> usesOfWhole)
     {
-        if (start == end)
-        {
-            return;
-        }
-
-        CutPiece part = new(start, end, share * sources[source].SweepRadians);
-        (int, int) key = (Math.Min(start, end), Math.Max(start, end));
+        (int, int) key = (Math.Min(part.Start, part.End), Math.Max(part.Start, part.End));
         if (!piecesBetween.TryGetValue(key, out List<int>? between))
         {
             between = [];
@@ -133,16 +148,18 @@ internal sealed class PieceCutter
         {
             if (MiddleOf(part).DistanceTo(MiddleOf(pieces[other])) <= 4 * tolerance)
             {
-                uses[other].Add(new PieceUse(source, pieces[other].Start == start ? 1 : -1));
+                int direction = pieces[other].Start == part.Start ? 1 : -1;
+                uses[other].AddRange(usesOfWhole.Select(use => use with { Direction = direction * use.Direction }));
                 return;
             }
         }
 
         between.Add(pieces.Count);
-        uses.Add([new PieceUse(source, 1)]);
+        uses.Add([.. usesOfWhole]);
         pieces.Add(part);
     }
 
-    private Point2D MiddleOf(CutPiece piece) =>
-        new PieceForm(Vertices[piece.Start], Vertices[piece.End], piece.Sweep).AtParameter(0.5).Point;
+    private PieceForm FormOf(CutPiece piece) => new(Vertices[piece.Start], Vertices[piece.End], piece.Sweep);
+
+    private Point2D MiddleOf(CutPiece piece) => FormOf(piece).AtParameter(0.5).Point;
 }

@@ -69,7 +69,7 @@ internal static class ArrangementAudit
     /// <summary>Close to the middle of a piece, each side must show the region that a search through the items finds.</summary>
     public static void SidesShowWhatWasPaintedLast(CrossSection section, Arrangement arrangement, OutlinePiece[] pieces)
     {
-        double step = 1e-7 * Size(arrangement);
+        double step = 1e-8 * Size(arrangement);
         for (int i = 0; i < pieces.Length; i++)
         {
             if (pieces[i].Length < 1e-3 * Size(arrangement))

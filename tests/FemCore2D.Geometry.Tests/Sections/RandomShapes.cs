@@ -61,19 +61,21 @@ internal static class ShapeLists
         return Arb.From(Gen.Choose(1, 8).SelectMany(n => shape.ArrayOf(n)), Smaller);
     }
 
-    public static CrossSection Paint(IEnumerable<ShapeSpec> shapes)
+    public static CrossSection Paint(IEnumerable<ShapeSpec> shapes, Func<Shape, Shape>? map = null)
     {
+        map ??= s => s;
         // The base keeps every region in sight and every shape inside the section.
         CrossSection section = CrossSection.Empty;
         for (int region = 0; region < 4; region++)
         {
-            section = section.Fill(Outline.Rectangle(new Point2D(-40 + (2 * region), -40), 1, 1), Name(region));
+            section = section.Fill(map(Shape.Inside(Outline.Rectangle(new Point2D(-40 + (2 * region), -40), 1, 1))), Name(region));
         }
 
-        section = section.Fill(Outline.Rectangle(new Point2D(-20, -20), 40, 40), "base");
+        section = section.Fill(map(Shape.Inside(Outline.Rectangle(new Point2D(-20, -20), 40, 40))), "base");
         foreach (ShapeSpec shape in shapes)
         {
-            section = shape.Region == 3 ? section.Hole(shape.ToShape()) : section.Fill(shape.ToShape(), Name(shape.Region));
+            Shape mapped = map(shape.ToShape());
+            section = shape.Region == 3 ? section.Hole(mapped) : section.Fill(mapped, Name(shape.Region));
         }
 
         return section;
