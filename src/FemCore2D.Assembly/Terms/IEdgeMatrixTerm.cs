@@ -1,0 +1,19 @@
+using System.Numerics;
+
+namespace FemCore2D.Assembly;
+
+/// <summary>
+/// A part of the weak form that contributes to the matrix by an integral over edges, of a coefficient times the values
+/// of test function and field.
+/// </summary>
+/// <typeparam name="T">The number type: <see cref="double"/> or <see cref="Complex"/>.</typeparam>
+public interface IEdgeMatrixTerm<T>
+    where T : unmanaged, INumberBase<T>
+{
+    /// <summary>The degree of the polynomials that describe the coefficient well along each edge of a region's cells.</summary>
+    /// <param name="region">The region, an index into <see cref="Geometry.Mesh.RegionNames"/>.</param>
+    int DegreeIn(int region);
+
+    /// <summary>The coefficient at a point.</summary>
+    T At(in EdgePoint point);
+}
