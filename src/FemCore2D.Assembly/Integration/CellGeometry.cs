@@ -39,7 +39,7 @@ internal readonly struct CellGeometry
             return;
         }
 
-        if (corners.Length == 4 && (maps.Degree == 1 || !HasArc(mesh, cell)))
+        if (!maps.IsCurved(cell))
         {
             twist = vertices[corners[2]] - vertices[corners[1]] - alongEta;
         }
@@ -76,20 +76,4 @@ internal readonly struct CellGeometry
     public Point2D PlaceAt(Point2D reference) => curved is null
         ? origin + (reference.X * alongXi) + (reference.Y * alongEta) + (reference.X * reference.Y * twist)
         : curved.PlaceOf(cell, reference);
-
-    private static bool HasArc(Mesh mesh, int cell)
-    {
-        if (mesh.HasArcs)
-        {
-            foreach (int edge in mesh.EdgesOf(cell))
-            {
-                if (mesh.SweepRadiansOf(edge) != 0)
-                {
-                    return true;
-                }
-            }
-        }
-
-        return false;
-    }
 }
