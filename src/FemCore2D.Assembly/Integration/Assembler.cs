@@ -1,4 +1,5 @@
 using System.Numerics;
+using System.Runtime.ExceptionServices;
 using FemCore2D.Geometry;
 using FemCore2D.Sparse;
 
@@ -167,16 +168,24 @@ public sealed class Assembler
             return;
         }
 
-        Parallel.For(
-            0,
-            plan.Chunks.Count,
-            Options(cancellationToken),
-            newScratch,
-            (chunk, _, scratch) =>
-            {
-                run(chunk, scratch);
-                return scratch;
-            },
-            _ => { });
+        try
+        {
+            Parallel.For(
+                0,
+                plan.Chunks.Count,
+                Options(cancellationToken),
+                newScratch,
+                (chunk, _, scratch) =>
+                {
+                    run(chunk, scratch);
+                    return scratch;
+                },
+                _ => { });
+        }
+        catch (AggregateException faults)
+        {
+            // A term that refuses its data does so by one exception, whatever the number of threads.
+            ExceptionDispatchInfo.Throw(faults.InnerExceptions[0]);
+        }
     }
 }
