@@ -86,11 +86,11 @@ internal sealed class ArrangedLines
             return;
         }
 
-        // Both parts run the way of their source, so one ends where the other begins.
+        // Parts run the way of their source, so one ends where the other begins, unless the source was bent double.
         (int before, int after) = pieces[first].End == vertex ? (first, second) : (second, first);
         ArrangedPiece into = pieces[before];
         ArrangedPiece from = pieces[after];
-        if (into.Boundaries != from.Boundaries)
+        if (into.End != vertex || from.Start != vertex || into.Boundaries != from.Boundaries)
         {
             return;
         }

@@ -71,6 +71,11 @@ internal static class SectionChecks
         }
     }
 
+    /// <summary>The fault of lines that pass each other neither within the tolerance nor clear of it.</summary>
+    public static InvalidSectionException TooClose(Point2D place, double tolerance) => new(
+        $"At {place} lines pass each other at just about {tolerance:G3} m, the length below which they count as one. "
+        + "Draw them coincident, or farther apart.");
+
     /// <summary>Throws where the boundary of a region does not close, which lines at just about the tolerance can cause.</summary>
     public static void RegionsClose(IReadOnlyList<Point2D> vertices, List<ArrangedPiece> pieces, double tolerance)
     {
@@ -91,8 +96,7 @@ internal static class SectionChecks
         {
             if (count != 0)
             {
-                throw new InvalidSectionException(
-                    $"At {vertices[vertex]} lines pass each other at just about {tolerance:G3} m, the length below which they count as one. Draw them coincident, or farther apart.");
+                throw TooClose(vertices[vertex], tolerance);
             }
         }
 
