@@ -86,15 +86,16 @@ internal sealed class ArrangedLines
             return;
         }
 
-        // Both parts run the way of their source, so one ends where the other begins.
+        // Parts run the way of their source, so one ends where the other begins, unless the source was bent double.
         (int before, int after) = pieces[first].End == vertex ? (first, second) : (second, first);
         ArrangedPiece into = pieces[before];
         ArrangedPiece from = pieces[after];
-        if (into.LeftRegion != from.LeftRegion || into.RightRegion != from.RightRegion || into.Boundaries != from.Boundaries)
+        if (into.End != vertex || from.Start != vertex || into.Boundaries != from.Boundaries)
         {
             return;
         }
 
+        // Their regions are the same, since nothing else divides the plane there.
         pieces[before] = into with { End = from.End, SweepRadians = into.SweepRadians + from.SweepRadians };
         isGone[after] = true;
         (int one, int other) = meeting[from.End];

@@ -34,6 +34,10 @@ internal sealed class PieceCutter
     private PieceForm[] forms = [];
     private BoxIndex tree = new([]);
 
+    /// <summary>The farthest that a piece bent in the last round to meet a vertex, and where.</summary>
+    private double bent;
+    private Point2D bentTo;
+
     /// <summary>Cuts pieces of at most half a turn each, at each other and at extra points.</summary>
     public PieceCutter(IReadOnlyList<OutlinePiece> sources, IReadOnlyList<Point2D> extraPoints, double tolerance)
     {
@@ -51,11 +55,15 @@ internal sealed class PieceCutter
             }
         }
 
-        double bent = double.PositiveInfinity;
-        for (int round = 0; round < MostRounds && bent > 1e-3 * tolerance; round++)
+        for (int round = 0; round == 0 || bent > 1e-3 * tolerance; round++)
         {
+            if (round == MostRounds)
+            {
+                throw SectionChecks.TooClose(bentTo, tolerance);
+            }
+
             AddContacts();
-            bent = Cut();
+            Cut();
         }
     }
 
@@ -93,10 +101,10 @@ internal sealed class PieceCutter
         }
     }
 
-    /// <summary>Cuts every piece at the vertices on it and returns the farthest that one bends to meet them.</summary>
-    private double Cut()
+    /// <summary>Cuts every piece at the vertices on it.</summary>
+    private void Cut()
     {
-        double bent = 0;
+        bent = 0;
         List<(double Fraction, int Vertex)>?[] cuts = new List<(double, int)>?[forms.Length];
         List<int> hits = [];
         for (int v = 0; v < Vertices.Count; v++)
@@ -105,12 +113,16 @@ internal sealed class PieceCutter
             tree.Query(new Box2D(place, place), hits);
             foreach (int i in hits)
             {
-                // A contact may have moved by the tolerance to the vertex that stands for it.
-                double distance = Math.Abs(forms[i].DistanceTo(place));
-                if (v != pieces[i].Start && v != pieces[i].End && distance <= 2 * tolerance && forms[i].Spans(place))
+                if (v == pieces[i].Start || v == pieces[i].End || !IsOn(forms[i], place))
                 {
-                    (cuts[i] ??= []).Add((forms[i].FractionOf(place), v));
-                    bent = Math.Max(bent, distance);
+                    continue;
+                }
+
+                (cuts[i] ??= []).Add((forms[i].FractionOf(place), v));
+                double distance = Math.Abs(forms[i].DistanceTo(place));
+                if (distance > bent)
+                {
+                    (bent, bentTo) = (distance, place);
                 }
             }
         }
@@ -131,8 +143,18 @@ internal sealed class PieceCutter
 
             AddPart(new CutPiece(vertex, whole[i].End, (1 - fraction) * whole[i].Sweep), usesOfWhole[i]);
         }
+    }
 
-        return bent;
+    /// <summary>Whether a piece is cut at a vertex.</summary>
+    private bool IsOn(in PieceForm form, Point2D vertex)
+    {
+        // A contact may have moved by the tolerance to the vertex that stands for it. Both parts must be shorter than
+        // the piece, or a few vertices about the tolerance apart would have it cut back and forth without end.
+        double length = form.Length;
+        return Math.Abs(form.DistanceTo(vertex)) <= 2 * tolerance
+            && form.Spans(vertex)
+            && (length > 10 * tolerance
+                || (vertex.DistanceTo(form.Start) < length && vertex.DistanceTo(form.End) < length));
     }
 
     private void AddPart(CutPiece part, List<PieceUse> usesOfWhole)

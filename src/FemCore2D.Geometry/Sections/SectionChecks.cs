@@ -14,7 +14,8 @@ internal static class SectionChecks
             if (!drawnShapes.Contains(shape))
             {
                 throw new InvalidSectionException(
-                    $"The {shapes[shape].Shape} is too small for the section: lengths below {tolerance:G3} m count as nothing in it. Leave it out, or divide the section.");
+                    $"The {shapes[shape].Shape} is too small for the section: "
+                    + $"lengths below {tolerance:G3} m count as nothing in it. Leave it out, or divide the section.");
             }
         }
     }
@@ -64,10 +65,16 @@ internal static class SectionChecks
             if (!seen.Contains(name))
             {
                 throw new InvalidSectionException(
-                    $"The boundary '{name}' is painted over completely, or lies outside the section. Draw its outline after what covers it, or draw it as a sheet.");
+                    $"The boundary '{name}' is painted over completely, or lies outside the section. "
+                    + "Draw its outline after what covers it, or draw it as a sheet.");
             }
         }
     }
+
+    /// <summary>The fault of lines that pass each other neither within the tolerance nor clear of it.</summary>
+    public static InvalidSectionException TooClose(Point2D place, double tolerance) => new(
+        $"At {place} lines pass each other at just about {tolerance:G3} m, the length below which they count as one. "
+        + "Draw them coincident, or farther apart.");
 
     /// <summary>Throws where the boundary of a region does not close, which lines at just about the tolerance can cause.</summary>
     public static void RegionsClose(IReadOnlyList<Point2D> vertices, List<ArrangedPiece> pieces, double tolerance)
@@ -89,8 +96,7 @@ internal static class SectionChecks
         {
             if (count != 0)
             {
-                throw new InvalidSectionException(
-                    $"At {vertices[vertex]} lines pass each other at just about {tolerance:G3} m, the length below which they count as one. Draw them coincident, or farther apart.");
+                throw TooClose(vertices[vertex], tolerance);
             }
         }
 
