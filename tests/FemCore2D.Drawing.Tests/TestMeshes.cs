@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using FemCore2D.Geometry;
 
 namespace FemCore2D.Drawing.Tests;
@@ -24,13 +23,13 @@ internal static class TestMeshes
             }
         }
 
-        return new MeshBuilder
+        return new MeshDefinition
         {
             Vertices = vertices,
-            Triangles = [.. triangles],
-            CellRegions = [.. regions],
+            Triangles = triangles,
+            CellRegions = regions,
             RegionNames = ["west", "east"],
-        }.Build();
+        }.ToMesh();
     }
 
     /// <summary>A rectangle of quadrilaterals of one region.</summary>
@@ -46,13 +45,13 @@ internal static class TestMeshes
             }
         }
 
-        return new MeshBuilder
+        return new MeshDefinition
         {
             Vertices = Grid(columns, rows, width, height),
-            Quadrilaterals = [.. cells],
+            Quadrilaterals = cells,
             CellRegions = new int[columns * rows],
             RegionNames = ["plate"],
-        }.Build();
+        }.ToMesh();
     }
 
     /// <summary>
@@ -72,12 +71,12 @@ internal static class TestMeshes
                 vertices.Add(Point2D.Origin + (radius * Vector2D.AtAngle(i * sweep)));
         }
 
-        ImmutableArray<string> names = [.. regions.Distinct()];
+        List<string> names = [.. regions.Distinct()];
         var triangles = new List<int>();
         var quadrilaterals = new List<int>();
         var triangleRegions = new List<int>();
         var quadrilateralRegions = new List<int>();
-        var marks = new List<MarkedEdge>();
+        var arcs = new List<(int, int, double)>();
         for (int ring = 0; ring < radii.Length; ring++)
         {
             int region = names.IndexOf(regions[ring]);
@@ -85,7 +84,7 @@ internal static class TestMeshes
             {
                 int next = (i + 1) % sectors;
                 int outer = 1 + (ring * sectors);
-                marks.Add(new MarkedEdge(outer + i, outer + next, sweep, -1));
+                arcs.Add((outer + i, outer + next, sweep));
                 if (ring == 0)
                 {
                     triangles.AddRange([0, outer + i, outer + next]);
@@ -107,19 +106,16 @@ internal static class TestMeshes
             }
         }
 
-        return new MeshBuilder
+        return new MeshDefinition
         {
-            Vertices = [.. vertices],
-            Triangles = [.. triangles],
-            Quadrilaterals = [.. quadrilaterals],
+            Vertices = vertices,
+            Triangles = triangles,
+            Quadrilaterals = quadrilaterals,
             CellRegions = [.. triangleRegions, .. quadrilateralRegions],
             RegionNames = names,
-            MarkedEdges = marks,
-        }.Build();
+            Arcs = arcs,
+        }.ToMesh();
     }
-
-    /// <summary>A mesh without a cell.</summary>
-    public static Mesh Empty() => new MeshBuilder { Vertices = [], CellRegions = [], RegionNames = [] }.Build();
 
     private static Point2D[] Grid(int columns, int rows, double width, double height)
     {

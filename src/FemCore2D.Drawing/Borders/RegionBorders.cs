@@ -21,33 +21,6 @@ internal sealed class RegionBorders
     /// <summary>The area of a region, to be filled.</summary>
     public SKPath Area(int region, PlotFrame frame) => PathOf(EdgeChain.Join(BorderSteps(region)), frame);
 
-    /// <summary>The window that just holds a mesh, arcs included; null without a cell.</summary>
-    public static ViewWindow? BoundsOf(Mesh mesh)
-    {
-        double left = double.PositiveInfinity;
-        double bottom = double.PositiveInfinity;
-        double right = double.NegativeInfinity;
-        double top = double.NegativeInfinity;
-        const int parts = 8;
-        for (int edge = 0; edge < mesh.EdgeCount; edge++)
-        {
-            if (!mesh.IsOuter(edge))
-                continue;
-            (int from, int to) = mesh.EndsOf(edge);
-            var arc = new CircularArc(mesh.Vertices[from], mesh.Vertices[to], mesh.SweepRadiansOf(edge));
-            for (int i = 0; i <= parts; i++)
-            {
-                Point2D point = arc.At((double)i / parts);
-                left = Math.Min(left, point.X);
-                right = Math.Max(right, point.X);
-                bottom = Math.Min(bottom, point.Y);
-                top = Math.Max(top, point.Y);
-            }
-        }
-
-        return left < right && bottom < top ? new ViewWindow(left, bottom, right, top) : null;
-    }
-
     /// <summary>Draws a path along the directed edges of chains, arcs as arcs.</summary>
     private SKPath PathOf(List<EdgeChain> chains, PlotFrame frame)
     {
@@ -61,19 +34,19 @@ internal sealed class RegionBorders
                 double sweep = mesh.SweepRadiansOf(step.Edge);
                 if (mesh.EndsOf(step.Edge).From != step.From)
                     sweep = -sweep;
-                if (Math.Abs(sweep) < 1e-9)
+                if (Math.Abs(sweep) < 1e-6)
                 {
                     builder.LineTo(end);
                     continue;
                 }
 
-                var arc = new CircularArc(mesh.Vertices[step.From], mesh.Vertices[step.To], sweep);
-                float radius = (float)(arc.Radius * frame.PointsPerMetre);
+                double chord = mesh.Vertices[step.From].DistanceTo(mesh.Vertices[step.To]);
+                float radius = (float)(chord / (2 * Math.Sin(Math.Abs(sweep) / 2)) * frame.PointsPerMetre);
                 builder.ArcTo(
                     radius,
                     radius,
                     0,
-                    Math.Abs(sweep) > Math.PI ? SKPathArcSize.Large : SKPathArcSize.Small,
+                    SKPathArcSize.Small,
                     sweep > 0 ? SKPathDirection.CounterClockwise : SKPathDirection.Clockwise,
                     end.X,
                     end.Y);

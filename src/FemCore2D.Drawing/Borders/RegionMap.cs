@@ -47,12 +47,17 @@ internal sealed class RegionMap
     public SKPoint? PlaceFor(int region, float boxWidth, float boxHeight)
     {
         int[] sums = SumsOf((ushort)(region + 1));
-        foreach (double room in (ReadOnlySpan<double>)[3, 2.2, 1.6, 1.3, 1.1, 1.0])
+        foreach (double room in (ReadOnlySpan<double>)[16, 11, 8, 5.5, 4, 3, 2.2, 1.6, 1.3, 1.1, 1.0])
         {
-            int w = (int)Math.Ceiling(boxWidth + ((room - 1) * boxHeight * 2));
+            int w = (int)Math.Ceiling(boxWidth + ((room - 1) * boxHeight));
             int h = (int)Math.Ceiling(boxHeight * room);
-            if (BestPlace(sums, w, h) is { } best)
-                return best;
+            if (BestPlace(sums, w, h) is null)
+                continue;
+
+            // The very roomiest place is a chance of rounding: a little less room leaves a choice of equals.
+            double eased = Math.Max(1, 0.85 * room);
+            return BestPlace(
+                sums, (int)Math.Ceiling(boxWidth + ((eased - 1) * boxHeight)), (int)Math.Ceiling(boxHeight * eased));
         }
 
         return null;
@@ -91,7 +96,7 @@ internal sealed class RegionMap
                 double dy = y - middleY;
 
                 // Sideways costs more: in rings the name then stands at the top, where it is looked for.
-                double distance = (1.5 * dx * dx) + (dy * dy) + (2e-3 * y * height);
+                double distance = ((1.5 * dx * dx) + (dy * dy)) * (1 + (0.2 * y / height));
                 if (distance < least)
                 {
                     least = distance;

@@ -30,16 +30,16 @@ public sealed class ColourScale
         this.table = table;
     }
 
-    /// <summary>From the dark of deep water, a wine red, by plum and slate blue to pale foam.</summary>
+    /// <summary>From pale foam by slate blue and plum to the wine red of deep weed.</summary>
     public static ColourScale Undertow { get; } = new("Undertow", ColourScaleKind.Sequential, ScalePaths.Undertow);
 
-    /// <summary>From dark petrol by marsh green and ochre to the pale rose of a shell.</summary>
+    /// <summary>From the pale rose of a shell by ochre and marsh green to petrol.</summary>
     public static ColourScale Samphire { get; } = new("Samphire", ColourScaleKind.Sequential, ScalePaths.Samphire);
 
     /// <summary>Two sides of a middle: heather violet below, lichen olive above, pale sand between.</summary>
     public static ColourScale EbbFlood { get; } = new("EbbFlood", ColourScaleKind.Diverging, ScalePaths.EbbFlood);
 
-    /// <summary>Once around: from foam by blue to ink, and by ochre back to foam.</summary>
+    /// <summary>Once around: from foam by blue to slate, and by ochre back to foam.</summary>
     public static ColourScale TideClock { get; } = new("TideClock", ColourScaleKind.Cyclic, ScalePaths.TideClock);
 
     /// <summary>The name of the scale.</summary>

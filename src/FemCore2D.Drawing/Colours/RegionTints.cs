@@ -16,8 +16,17 @@ public static class RegionTints
         Tint(0.92, 0.025, 220), Tint(0.80, 0.070, 120), Tint(0.90, 0.050, 30), Tint(0.75, 0.060, 275),
     ];
 
-    /// <summary>The tint of the region with a number; after the twelfth they begin anew.</summary>
-    internal static Colour Of(int region) => Foreshore[region % Foreshore.Length];
+    /// <summary>The tint of the region with a number; from the thirteenth on they return, darker and turned in hue.</summary>
+    internal static Colour Of(int region)
+    {
+        Colour tint = Foreshore[region % Foreshore.Length];
+        int round = region / Foreshore.Length;
+        if (round == 0)
+            return tint;
+        Oklab first = Oklab.FromColour(tint);
+        double hue = (Math.Atan2(first.B, first.A) * 180 / Math.PI) + (25 * round);
+        return Oklab.FromPolar(first.Lightness - (0.07 * Math.Min(round, 3)), first.Chroma + 0.01, hue).ToColour();
+    }
 
     private static Colour Tint(double lightness, double chroma, double hue) =>
         Oklab.FromPolar(lightness, chroma, hue).ToColour();

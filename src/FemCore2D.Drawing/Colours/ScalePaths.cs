@@ -3,15 +3,18 @@ namespace FemCore2D.Drawing;
 /// <summary>The paths of the library's colour scales through the perceptual space.</summary>
 internal static class ScalePaths
 {
+    // All paths end light enough that dark lines and letters stay readable on them.
+    private const double Darkest = 0.4;
+
     public static Oklab Undertow(double t) => Oklab.FromPolar(
-        Line(0.24, 0.95, t),
-        Between(t, (0, 0.075), (0.3, 0.105), (0.6, 0.095), (1, 0.035)),
-        Between(t, (0, 382), (0.25, 345), (0.5, 285), (0.75, 235), (1, 175)));
+        Line(0.965, Darkest, t),
+        Between(t, (0, 0.022), (0.35, 0.085), (0.7, 0.115), (1, 0.12)),
+        Between(t, (0, 175), (0.25, 232), (0.5, 282), (0.75, 335), (1, 377)));
 
     public static Oklab Samphire(double t) => Oklab.FromPolar(
-        Line(0.25, 0.95, t),
-        Between(t, (0, 0.05), (0.35, 0.085), (0.65, 0.105), (1, 0.03)),
-        Between(t, (0, 225), (0.3, 160), (0.6, 95), (1, 40)));
+        Line(0.965, Darkest, t),
+        Between(t, (0, 0.02), (0.35, 0.1), (0.65, 0.095), (1, 0.075)),
+        Between(t, (0, 45), (0.4, 95), (0.7, 150), (1, 222)));
 
     public static Oklab EbbFlood(double t)
     {
@@ -19,16 +22,16 @@ internal static class ScalePaths
         double hue = t < 0.5
             ? Between(side, (0, 265), (0.5, 285), (1, 305))
             : Between(side, (0, 110), (0.5, 108), (1, 90));
-        double chroma = Between(side, (0, 0.006), (0.5, 0.095), (1, 0.115));
-        return Oklab.FromPolar(Line(0.965, 0.36, side), chroma, hue);
+        double chroma = Between(side, (0, 0.006), (0.5, 0.095), (1, 0.12));
+        return Oklab.FromPolar(Line(0.97, Darkest, side), chroma, hue);
     }
 
     public static Oklab TideClock(double t)
     {
         double side = 1 - Math.Abs((2 * t) - 1);
-        double chroma = 0.11 * Math.Sin(Math.PI * side);
+        double chroma = 0.115 * Math.Sin(Math.PI * side);
         double hue = t < 0.5 ? Line(225, 280, side) : Line(95, 60, side);
-        return Oklab.FromPolar(Line(0.93, 0.3, side), chroma, hue);
+        return Oklab.FromPolar(Line(0.95, Darkest, side), chroma, hue);
     }
 
     private static double Line(double from, double to, double t) => from + (t * (to - from));

@@ -65,7 +65,7 @@ public sealed partial record Figure
             layout.Draw(new Surface(canvas, PaperFineness, isVector: true, writesGlyphs: false));
         }
 
-        return Encoding.UTF8.GetString(stream.ToArray());
+        return SvgText.Tidy(Encoding.UTF8.GetString(stream.ToArray()), layout.Size);
     }
 
     /// <summary>Writes the figure as scalable shapes (SVG 1.1, W3C).</summary>

@@ -1,10 +1,13 @@
 using System.Collections.Immutable;
+using FemCore2D.Geometry;
 
 namespace FemCore2D.Drawing;
 
 /// <summary>One pair of axes with layers drawn over each other, to the same scale both ways.</summary>
 public sealed record Panel
 {
+    private readonly Box2D? view;
+
     /// <summary>Creates a panel.</summary>
     /// <param name="layers">The layers, the lowest first.</param>
     public Panel(params ReadOnlySpan<Layer> layers)
@@ -21,7 +24,14 @@ public sealed record Panel
     public string Title { get; init; } = "";
 
     /// <summary>The part of the plane that is seen; by default all layers with a narrow margin.</summary>
-    public ViewWindow? View { get; init; }
+    /// <exception cref="ArgumentOutOfRangeException">The box is not finite, or has no width or height.</exception>
+    public Box2D? View
+    {
+        get => view;
+        init => view = value is not { } box || (box.Lower.IsFinite && box.Upper.IsFinite && box.Width > 0 && box.Height > 0)
+            ? value
+            : throw new ArgumentOutOfRangeException(nameof(View), value, "The view is a finite box with a width and a height.");
+    }
 
     /// <summary>The name of the first coordinate.</summary>
     public string HorizontalName { get; init; } = "x";
@@ -33,32 +43,16 @@ public sealed record Panel
     public bool ShowsAxes { get; init; } = true;
 
     /// <summary>The window that is seen.</summary>
-    internal ViewWindow Window()
+    internal Box2D Window()
     {
         if (Layers.IsDefaultOrEmpty)
             throw new InvalidFigureException("A panel has no layers, so there is nothing to draw. Give it at least one.");
         if (View is { } chosen)
-        {
-            return chosen.Width > 0 && chosen.Height > 0
-                ? chosen
-                : throw new InvalidFigureException("The view window of a panel has no size. Create it from its four sides.");
-        }
-
-        ViewWindow? all = null;
-        foreach (Layer layer in Layers)
-        {
-            if (layer.Extent is not { } one)
-                continue;
-            all = all is not { } so
-                ? one
-                : new ViewWindow(
-                    Math.Min(so.Left, one.Left),
-                    Math.Min(so.Bottom, one.Bottom),
-                    Math.Max(so.Right, one.Right),
-                    Math.Max(so.Top, one.Top));
-        }
-
-        return all?.Widened(0.02) ?? throw new InvalidFigureException(
-            "No layer of a panel has an extent of its own. Add a layer that shows a mesh or field, or choose the view window.");
+            return chosen;
+        Box2D all = Layers.Aggregate(Box2D.Empty, (box, layer) => box.Union(layer.Extent));
+        return all.Width > 0 && all.Height > 0
+            ? all.Widened(0.02 * Math.Max(all.Width, all.Height))
+            : throw new InvalidFigureException(
+                "No layer of a panel has an extent of its own. Add a layer that shows a mesh or field, or choose the view.");
     }
 }

@@ -1,3 +1,4 @@
+using FemCore2D.Geometry;
 using SkiaSharp;
 
 namespace FemCore2D.Drawing;
@@ -33,7 +34,7 @@ internal sealed class PanelLayout
 
     public static PanelLayout Arrange(Panel panel, float x, float y, float width, float height, double pixelsPerPoint)
     {
-        ViewWindow view = panel.Window();
+        Box2D view = panel.Window();
         IReadOnlyList<LegendItem> items = [];
 
         // What the legend must hold depends on the size of the plot, which depends on the legend: it soon settles.
@@ -85,7 +86,7 @@ internal sealed class PanelLayout
 
     private static PanelLayout Place(
         Panel panel,
-        ViewWindow view,
+        Box2D view,
         IReadOnlyList<LegendItem> items,
         float x,
         float y,

@@ -4,7 +4,7 @@ using SkiaSharp;
 
 namespace FemCore2D.Drawing;
 
-/// <summary>A vector as arrows on a regular grid, each with its middle at its grid point.</summary>
+/// <summary>A vector as arrows on a regular grid, each with its middle at its grid point; names of lower layers are spared.</summary>
 public sealed record ArrowLayer : Layer
 {
     private const int ColourBands = 10;
@@ -12,11 +12,9 @@ public sealed record ArrowLayer : Layer
 
     /// <summary>Creates the layer.</summary>
     /// <param name="vector">What is drawn.</param>
-    /// <exception cref="InvalidFigureException">The mesh has no cells.</exception>
     public ArrowLayer(CellVector vector)
     {
         ArgumentNullException.ThrowIfNull(vector);
-        Checked(vector.Mesh);
         Vector = vector;
     }
 
@@ -42,13 +40,13 @@ public sealed record ArrowLayer : Layer
     /// <summary>The colour of arrows of one colour.</summary>
     public Colour Colour { get; init; } = Ink.Text;
 
-    /// <summary>What the vector is, for the legend or scale bar.</summary>
+    /// <summary>What the vector is, for the legend or scale bar; with neither label nor unit there is no legend.</summary>
     public string Label { get; init; } = "";
 
     /// <summary>The unit of its magnitude.</summary>
     public string Unit { get; init; } = "";
 
-    internal override ViewWindow? Extent => RegionBorders.BoundsOf(Vector.Mesh);
+    internal override Box2D Extent => Sight.BoundsOf(Vector.Mesh);
 
     internal override bool HasScaleBar => Colours is not null;
 
@@ -62,13 +60,13 @@ public sealed record ArrowLayer : Layer
         if (samples.Count == 0)
             return null;
         double high = samples.Max(sample => sample.Value.Length);
-        ImmutableArray<double> edges = LevelChoice.BandEdges(0, high, ColourBands, ValueSpacing.Linear, null);
+        ImmutableArray<double> edges = LevelChoice.BandEdges(0, high, ColourBands, ValueSpacing.Linear, null, Unit);
         return BandScale.Make(edges, 0, high, Colours, Label, Unit, isLogarithmic: false);
     }
 
     internal override IEnumerable<LegendItem> LegendIn(PlotFrame frame)
     {
-        if (Sizing == ArrowSizing.Equal || Colours is not null)
+        if (Sizing == ArrowSizing.Equal || Colours is not null || (Label.Length == 0 && Unit.Length == 0))
             yield break;
         double reach = ReachOf(GridSampler.Sample(Vector, frame, Spacing));
         if (!(reach > 0))
@@ -79,7 +77,7 @@ public sealed record ArrowLayer : Layer
         UnitPrefix prefix = UnitPrefix.For(Unit, shown);
         string measure = $"{NumberText.Short(shown / prefix.Factor)} {prefix.Unit}".TrimEnd();
         yield return new LegendItem(
-            Label.Length == 0 ? measure : $"{Label}: {measure}", Colour, (float)(LongestArrow * shown / reach));
+            Label.Length == 0 ? measure : $"{Label}: {measure}", Ink.Text, (float)(LongestArrow * shown / reach));
     }
 
     internal override void Draw(Surface surface, PlotFrame frame)
@@ -97,7 +95,7 @@ public sealed record ArrowLayer : Layer
             foreach ((SKPoint place, Vector2D value) in samples)
             {
                 double size = value.Length;
-                if (size < 1e-12 * reach || (scale is not null && BandOf(scale, size) != band))
+                if (size < 1e-12 * reach || !frame.IsFree(SKRect.Create(place.X - 1, place.Y - 1, 2, 2)) || (scale is not null && BandOf(scale, size) != band))
                     continue;
                 double length = Sizing == ArrowSizing.Equal ? 0.8 * LongestArrow : LongestArrow * Math.Min(1, size / reach);
                 if (length >= 1)

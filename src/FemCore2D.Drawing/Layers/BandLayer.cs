@@ -1,3 +1,5 @@
+using System.Collections.Immutable;
+using FemCore2D.Geometry;
 using SkiaSharp;
 
 namespace FemCore2D.Drawing;
@@ -14,11 +16,9 @@ public sealed record BandLayer : Layer
 
     /// <summary>Creates the layer.</summary>
     /// <param name="scalar">What is drawn.</param>
-    /// <exception cref="InvalidFigureException">The mesh has no cells.</exception>
     public BandLayer(CellScalar scalar)
     {
         ArgumentNullException.ThrowIfNull(scalar);
-        Checked(scalar.Mesh);
         Scalar = scalar;
     }
 
@@ -45,7 +45,10 @@ public sealed record BandLayer : Layer
     /// <summary>How the levels follow each other.</summary>
     public ValueSpacing Spacing { get; init; }
 
-    /// <summary>The range that the colours cover; by default that of the values seen. Values beyond get the end colours.</summary>
+    /// <summary>
+    /// The range that the colours cover; by default that of the values seen. Values beyond it get the end colours; on a
+    /// cyclic scale the range is the period, so that values beyond it begin anew.
+    /// </summary>
     public ValueRange? Range { get; init; }
 
     /// <summary>
@@ -57,42 +60,56 @@ public sealed record BandLayer : Layer
     /// <summary>Whether a scale bar is drawn.</summary>
     public bool ShowsScaleBar { get; init; } = true;
 
-    internal override ViewWindow? Extent => RegionBorders.BoundsOf(Scalar.Mesh);
+    internal override Box2D Extent => Sight.BoundsOf(Scalar.Mesh);
 
     internal override bool HasScaleBar => ShowsScaleBar;
 
+    /// <summary>Whether values that differ by the whole range are the same, as on a cyclic scale with a given range.</summary>
+    private bool IsPeriodic => Colours.Kind == ColourScaleKind.Cyclic && Range is not null;
+
     internal override BandScale? ScaleIn(PlotFrame frame)
     {
-        FacetMesh facets = frame.FacetsOf(Scalar, AveragesInRegions);
+        FacetMesh facets = FacetsIn(frame);
         if (double.IsNaN(facets.Minimum))
             return null;
         bool isLogarithmic = Spacing == ValueSpacing.Logarithmic && (Range?.High ?? facets.Maximum) > 0;
-        return BandScale.Make(
-            LevelChoice.BandEdges(facets.Minimum, facets.Maximum, Count, Spacing, Range),
-            facets.Minimum,
-            facets.Maximum,
-            Colours,
-            Label,
-            Unit,
-            isLogarithmic);
+        ImmutableArray<double> edges = LevelChoice.BandEdges(facets.Minimum, facets.Maximum, Count, Spacing, Range, Unit);
+        (double low, double high) = IsPeriodic ? (edges[0], edges[^1]) : (facets.Minimum, facets.Maximum);
+        return BandScale.Make(edges, low, high, Colours, Label, Unit, isLogarithmic);
     }
 
     internal override void Draw(Surface surface, PlotFrame frame)
     {
         if (ScaleIn(frame) is not { } scale)
             return;
-        FacetMesh facets = frame.FacetsOf(Scalar, AveragesInRegions);
+        FacetMesh facets = FacetsIn(frame);
+        double period = IsPeriodic ? scale.Edges[^1] - scale.Edges[0] : 0;
+        int bands = scale.Colours.Length;
+        int first = IsPeriodic ? bands * (int)Math.Floor((facets.Minimum - scale.Edges[0]) / period) : 0;
+        int end = IsPeriodic ? bands * (int)Math.Ceiling((facets.Maximum - scale.Edges[0]) / period) : bands;
 
         // Each band is laid over the one below it, which reaches under it: no ground shows between them.
-        for (int band = 0; band < scale.Colours.Length; band++)
+        bool isGround = true;
+        for (int band = first; band < Math.Max(end, first + 1); band++)
         {
-            double level = band == 0 ? double.NegativeInfinity : scale.Edges[band];
+            if (band + 1 < end && LowerEdge(band + 1) <= facets.Minimum)
+                continue;
+            double level = isGround ? double.NegativeInfinity : LowerEdge(band);
             if (level > facets.Maximum)
                 break;
-            if (band + 1 < scale.Colours.Length && scale.Edges[band + 1] <= facets.Minimum)
-                continue;
             using SKPath area = frame.PathOf(LevelTracer.OutlinesAbove(facets, level));
-            surface.Fill(area, scale.Colours[band]);
+            surface.Fill(area, scale.Colours[((band % bands) + bands) % bands]);
+            isGround = false;
+        }
+
+        double LowerEdge(int band)
+        {
+            int turns = (int)Math.Floor((double)band / bands);
+            return scale.Edges[band - (turns * bands)] + (turns * period);
         }
     }
+
+    private FacetMesh FacetsIn(PlotFrame frame) => IsPeriodic
+        ? frame.PeriodicFacetsOf(Scalar, Range!.Value)
+        : frame.FacetsOf(Scalar, AveragesInRegions);
 }

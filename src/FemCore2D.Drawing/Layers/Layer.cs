@@ -9,8 +9,8 @@ public abstract record Layer
     {
     }
 
-    /// <summary>The window that holds everything in the layer, or null when it has no extent of its own.</summary>
-    internal abstract ViewWindow? Extent { get; }
+    /// <summary>The window that holds everything in the layer; the empty box when it has no extent of its own.</summary>
+    internal abstract Box2D Extent { get; }
 
     /// <summary>Whether a scale bar stands beside the panel for the layer.</summary>
     internal virtual bool HasScaleBar => false;
@@ -22,14 +22,6 @@ public abstract record Layer
 
     /// <summary>What the legend must explain.</summary>
     internal virtual IEnumerable<LegendItem> LegendIn(PlotFrame frame) => [];
-
-    private protected static Mesh Checked(Mesh mesh)
-    {
-        ArgumentNullException.ThrowIfNull(mesh);
-        return mesh.CellCount > 0
-            ? mesh
-            : throw new InvalidFigureException("The mesh has no cells, so there is nothing to draw of it. Draw a mesh with cells.");
-    }
 
     private protected static float CheckedWidth(double width, string name) =>
         width >= 0 && width <= 100

@@ -1,3 +1,4 @@
+using FemCore2D.Geometry;
 using System.Collections.Immutable;
 using SkiaSharp;
 
@@ -7,16 +8,14 @@ namespace FemCore2D.Drawing;
 public sealed record LevelLineLayer : Layer
 {
     private readonly int count = 12;
-    private readonly float width = 0.7f;
+    private readonly float width = 0.5f;
     private readonly ImmutableArray<double> levels = [];
 
     /// <summary>Creates the layer.</summary>
     /// <param name="scalar">What is drawn.</param>
-    /// <exception cref="InvalidFigureException">The mesh has no cells.</exception>
     public LevelLineLayer(CellScalar scalar)
     {
         ArgumentNullException.ThrowIfNull(scalar);
-        Checked(scalar.Mesh);
         Scalar = scalar;
     }
 
@@ -48,7 +47,7 @@ public sealed record LevelLineLayer : Layer
     public ValueRange? Range { get; init; }
 
     /// <summary>The colour of the lines.</summary>
-    public Colour Colour { get; init; } = new(255, 255, 255, 190);
+    public Colour Colour { get; init; } = Ink.Outline.WithOpacity(0.75);
 
     /// <summary>The width of the lines in points.</summary>
     /// <exception cref="ArgumentOutOfRangeException">The width is not from 0 to 100.</exception>
@@ -67,7 +66,7 @@ public sealed record LevelLineLayer : Layer
     /// <summary>Whether values that differ between cells of one region are averaged where the cells meet.</summary>
     public bool AveragesInRegions { get; init; } = true;
 
-    internal override ViewWindow? Extent => RegionBorders.BoundsOf(Scalar.Mesh);
+    internal override Box2D Extent => Sight.BoundsOf(Scalar.Mesh);
 
     internal override void Draw(Surface surface, PlotFrame frame)
     {
@@ -76,7 +75,7 @@ public sealed record LevelLineLayer : Layer
             return;
         ImmutableArray<double> values = !Levels.IsEmpty
             ? Levels
-            : LevelChoice.LineLevels(facets.Minimum, facets.Maximum, Count, Spacing, Range);
+            : LevelChoice.LineLevels(facets.Minimum, facets.Maximum, Count, Spacing, Range, Unit);
         if (values.IsEmpty)
             return;
         UnitPrefix prefix = UnitPrefix.For(Unit, values.Max(Math.Abs));

@@ -13,8 +13,11 @@ public sealed record MeshLayer : Layer
 
     /// <summary>Creates the layer.</summary>
     /// <param name="mesh">The mesh.</param>
-    /// <exception cref="InvalidFigureException">The mesh has no cells.</exception>
-    public MeshLayer(Mesh mesh) => Mesh = Checked(mesh);
+    public MeshLayer(Mesh mesh)
+    {
+        ArgumentNullException.ThrowIfNull(mesh);
+        Mesh = mesh;
+    }
 
     /// <summary>The mesh.</summary>
     public Mesh Mesh { get; }
@@ -33,7 +36,7 @@ public sealed record MeshLayer : Layer
         init => width = CheckedWidth(value, nameof(Width));
     }
 
-    internal override ViewWindow? Extent => RegionBorders.BoundsOf(Mesh);
+    internal override Box2D Extent => Sight.BoundsOf(Mesh);
 
     internal override void Draw(Surface surface, PlotFrame frame)
     {
@@ -61,7 +64,7 @@ public sealed record MeshLayer : Layer
         bool[] isDone = new bool[Mesh.EdgeCount];
         for (int cell = 0; cell < Mesh.CellCount; cell++)
         {
-            if (!frame.View.Reaches(Mesh, cell))
+            if (!Sight.Reaches(Mesh, cell, frame.View))
                 continue;
             foreach (int edge in Mesh.EdgesOf(cell))
             {
@@ -86,12 +89,11 @@ public sealed record MeshLayer : Layer
         double sweep = Mesh.SweepRadiansOf(edge);
         if (sweep == 0)
             return [start, end];
-        var arc = new CircularArc(start, end, sweep);
         double pixels = start.DistanceTo(end) * frame.PointsPerMetre * frame.PixelsPerPoint;
         int parts = Math.Clamp((int)Math.Ceiling(Math.Sqrt(pixels * Math.Abs(sweep))), 1, 64);
         var points = new Point2D[parts + 1];
         for (int i = 0; i <= parts; i++)
-            points[i] = arc.At((double)i / parts);
+            points[i] = Mesh.PointOnEdge(edge, (double)i / parts);
         return points;
     }
 }

@@ -10,8 +10,11 @@ public sealed record OutlineLayer : Layer
 
     /// <summary>Creates the layer.</summary>
     /// <param name="mesh">The mesh.</param>
-    /// <exception cref="InvalidFigureException">The mesh has no cells.</exception>
-    public OutlineLayer(Mesh mesh) => Mesh = Checked(mesh);
+    public OutlineLayer(Mesh mesh)
+    {
+        ArgumentNullException.ThrowIfNull(mesh);
+        Mesh = mesh;
+    }
 
     /// <summary>The mesh.</summary>
     public Mesh Mesh { get; }
@@ -27,7 +30,7 @@ public sealed record OutlineLayer : Layer
         init => width = CheckedWidth(value, nameof(Width));
     }
 
-    internal override ViewWindow? Extent => RegionBorders.BoundsOf(Mesh);
+    internal override Box2D Extent => Sight.BoundsOf(Mesh);
 
     internal override void Draw(Surface surface, PlotFrame frame)
     {

@@ -34,7 +34,7 @@ public sealed record PointLayer : Layer
     /// <summary>The colour of the marks.</summary>
     public Colour Colour { get; init; } = new(176, 62, 40);
 
-    internal override ViewWindow? Extent => null;
+    internal override Box2D Extent => Box2D.Empty;
 
     internal override void Draw(Surface surface, PlotFrame frame)
     {

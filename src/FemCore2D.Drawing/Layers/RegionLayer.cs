@@ -15,8 +15,11 @@ public sealed record RegionLayer : Layer
 
     /// <summary>Creates the layer.</summary>
     /// <param name="mesh">The mesh.</param>
-    /// <exception cref="InvalidFigureException">The mesh has no cells.</exception>
-    public RegionLayer(Mesh mesh) => Mesh = Checked(mesh);
+    public RegionLayer(Mesh mesh)
+    {
+        ArgumentNullException.ThrowIfNull(mesh);
+        Mesh = mesh;
+    }
 
     /// <summary>The mesh.</summary>
     public Mesh Mesh { get; }
@@ -38,7 +41,7 @@ public sealed record RegionLayer : Layer
         init => outlineWidth = CheckedWidth(value, nameof(OutlineWidth));
     }
 
-    internal override ViewWindow? Extent => RegionBorders.BoundsOf(Mesh);
+    internal override Box2D Extent => Sight.BoundsOf(Mesh);
 
     internal static void FillAreas(
         Surface surface, PlotFrame frame, Mesh mesh, ImmutableDictionary<string, Colour> tints)
@@ -78,7 +81,7 @@ public sealed record RegionLayer : Layer
 
         if (!ShowsNames)
             return;
-        Colour halo = IsTinted ? default : Colour.White.WithOpacity(0.75);
+        Colour halo = IsTinted ? default : Colour.White.WithOpacity(0.85);
         foreach ((int region, SKPoint? place) in Places(frame))
         {
             if (place is not { } middle)

@@ -1,3 +1,4 @@
+using FemCore2D.Geometry;
 using SkiaSharp;
 
 namespace FemCore2D.Drawing;
@@ -14,18 +15,18 @@ internal sealed class AxisPair
     private readonly List<(double Place, string Text)> vertical;
 
     /// <summary>Chooses the unit and the numbers for about a width of the plot.</summary>
-    public AxisPair(Panel panel, ViewWindow view, double widthPoints)
+    public AxisPair(Panel panel, Box2D view, double widthPoints)
         : this(panel, view, widthPoints, widthPoints * view.Height / view.Width)
     {
     }
 
-    private AxisPair(Panel panel, ViewWindow view, double widthPoints, double heightPoints)
+    private AxisPair(Panel panel, Box2D view, double widthPoints, double heightPoints)
     {
         this.panel = panel;
-        double reach = new[] { view.Left, view.Right, view.Bottom, view.Top }.Max(Math.Abs);
+        double reach = new[] { view.Lower.X, view.Upper.X, view.Lower.Y, view.Upper.Y }.Max(Math.Abs);
         unit = UnitPrefix.For("m", reach);
-        horizontal = Ticks(view.Left, view.Right, Math.Clamp(widthPoints / 48, 1.5, 9));
-        vertical = Ticks(view.Bottom, view.Top, Math.Clamp(heightPoints / 30, 1.5, 9));
+        horizontal = Ticks(view.Lower.X, view.Upper.X, Math.Clamp(widthPoints / 48, 1.5, 9));
+        vertical = Ticks(view.Lower.Y, view.Upper.Y, Math.Clamp(heightPoints / 30, 1.5, 9));
     }
 
     /// <summary>The room that the numbers and the title take beside the plot.</summary>

@@ -62,7 +62,7 @@ internal sealed class BandScale
     {
         double factor = Prefix.Factor;
         if (IsLogarithmic)
-            return [.. Edges.Select(edge => NumberText.Short(edge / factor))];
+            return [.. Edges.Select(edge => NumberText.Compact(edge / factor))];
 
         // Ends that were asked for may be no round numbers: they do not set the decimals of the others.
         IEnumerable<double> inner = Edges.Length > 3 ? Edges.Skip(1).SkipLast(1) : Edges;

@@ -63,7 +63,7 @@ internal readonly record struct LineText(string Text, SKPoint Middle, float Degr
     }
 
     public void Draw(Surface surface, Colour colour) =>
-        surface.Write(Text, Middle.X, Middle.Y, Anchor.Middle, new TextStyle(Size, colour), Degrees);
+        surface.Write(Text, Middle.X, Middle.Y, Anchor.Middle, new TextStyle(Size, colour, Halo: Colour.White.WithOpacity(0.6)), Degrees);
 
     private static bool IsRoom(SKPoint middle, float width, PlotFrame frame)
     {

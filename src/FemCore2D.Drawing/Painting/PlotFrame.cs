@@ -7,13 +7,14 @@ namespace FemCore2D.Drawing;
 internal sealed class PlotFrame
 {
     private readonly Dictionary<(CellScalar Scalar, bool Averages), FacetMesh> facets = [];
+    private readonly Dictionary<(CellScalar Scalar, ValueRange Period), FacetMesh> periodicFacets = [];
     private readonly Dictionary<Mesh, RegionBorders> borders = [];
 
     /// <summary>Places a window.</summary>
     /// <param name="view">The window.</param>
     /// <param name="area">Where it lies on the page, in points, with the window's own ratio of sides.</param>
     /// <param name="pixelsPerPoint">The fineness of the picture.</param>
-    public PlotFrame(ViewWindow view, SKRect area, double pixelsPerPoint)
+    public PlotFrame(Box2D view, SKRect area, double pixelsPerPoint)
     {
         View = view;
         Area = area;
@@ -21,7 +22,7 @@ internal sealed class PlotFrame
         PointsPerMetre = area.Width / view.Width;
     }
 
-    public ViewWindow View { get; }
+    public Box2D View { get; }
 
     public SKRect Area { get; }
 
@@ -33,12 +34,12 @@ internal sealed class PlotFrame
     public List<SKRect> Taken { get; } = [];
 
     public SKPoint ToPage(Point2D place) => new(
-        (float)(Area.Left + ((place.X - View.Left) * PointsPerMetre)),
-        (float)(Area.Bottom - ((place.Y - View.Bottom) * PointsPerMetre)));
+        (float)(Area.Left + ((place.X - View.Lower.X) * PointsPerMetre)),
+        (float)(Area.Bottom - ((place.Y - View.Lower.Y) * PointsPerMetre)));
 
     public Point2D ToPlane(SKPoint point) => new(
-        View.Left + ((point.X - Area.Left) / PointsPerMetre),
-        View.Bottom + ((Area.Bottom - point.Y) / PointsPerMetre));
+        View.Lower.X + ((point.X - Area.Left) / PointsPerMetre),
+        View.Lower.Y + ((Area.Bottom - point.Y) / PointsPerMetre));
 
     public FacetMesh FacetsOf(CellScalar scalar, bool averages)
     {
@@ -46,6 +47,18 @@ internal sealed class PlotFrame
         {
             mesh = FacetMeshBuilder.Build(scalar, PointsPerMetre * PixelsPerPoint, View, averages);
             facets.Add((scalar, averages), mesh);
+        }
+
+        return mesh;
+    }
+
+    /// <summary>Facets of a scalar whose values recur with a period: unrolled, and not averaged, as 359 and 1 degrees have no useful mean.</summary>
+    public FacetMesh PeriodicFacetsOf(CellScalar scalar, ValueRange period)
+    {
+        if (!periodicFacets.TryGetValue((scalar, period), out FacetMesh? mesh))
+        {
+            mesh = PeriodicFacets.Unroll(FacetsOf(scalar, averages: false), period.Low, period.High - period.Low);
+            periodicFacets.Add((scalar, period), mesh);
         }
 
         return mesh;

@@ -132,30 +132,53 @@ internal static class ScaleBar
     /// <summary>Which edges get a number: all, or every second, fifth ... counted from zero so that round ones stay.</summary>
     private static List<int> Written(BandScale scale, float[] at, float gap, Func<int, float> width)
     {
-        int count = at.Length;
-        double step = count > 2 ? scale.Edges[2] - scale.Edges[1] : scale.Edges[1] - scale.Edges[0];
-        foreach (int stride in (ReadOnlySpan<int>)[1, 2, 5, 10, 20, 50, 100, 200, 500, 1000])
+        // Decades go one by one; steps of 15 or 30 degrees by threes to right angles, which decimal ones do not.
+        ReadOnlySpan<int> strides = scale.IsLogarithmic ? [1, 2, 3, 4, 5, 7, 11] : scale.Unit == "°" ? [1, 2, 3, 6, 12] : [1, 2, 5, 10, 20, 50, 100, 200, 500, 1000];
+        foreach (int stride in strides)
         {
-            var chosen = new List<int>();
-            for (int i = 0; i < count; i++)
-            {
-                double number = scale.IsLogarithmic ? i : Math.Round(scale.Edges[i] / step);
-                bool isRegular = number % stride == 0 && (scale.IsLogarithmic || Math.Abs((number * step) - scale.Edges[i]) < 1e-6 * step);
-                if (isRegular || (stride == 1 && (i == 0 || i == count - 1)))
-                    chosen.Add(i);
-            }
-
-            bool fits = true;
+            List<int> chosen = scale.IsLogarithmic ? PowersOfTen(scale, stride) : Regular(scale, stride);
+            bool fits = chosen.Count > 1 || (stride > 1 && chosen.Count > 0);
             for (int i = 1; i < chosen.Count; i++)
             {
                 float needed = gap + ((width(chosen[i - 1]) + width(chosen[i])) / 2);
                 fits &= Math.Abs(at[chosen[i]] - at[chosen[i - 1]]) >= needed;
             }
 
-            if (fits && chosen.Count > 0)
+            if (fits)
                 return chosen;
         }
 
         return [0];
+    }
+
+    private static List<int> Regular(BandScale scale, int stride)
+    {
+        int count = scale.Edges.Length;
+        double step = count > 2 ? scale.Edges[2] - scale.Edges[1] : scale.Edges[1] - scale.Edges[0];
+        var chosen = new List<int>();
+        for (int i = 0; i < count; i++)
+        {
+            double number = Math.Round(scale.Edges[i] / step);
+            bool isRegular = number % stride == 0 && Math.Abs((number * step) - scale.Edges[i]) < 1e-6 * step;
+            if (isRegular || (stride == 1 && (i == 0 || i == count - 1)))
+                chosen.Add(i);
+        }
+
+        return chosen;
+    }
+
+    private static List<int> PowersOfTen(BandScale scale, int stride)
+    {
+        if (stride == 1)
+            return [.. Enumerable.Range(0, scale.Edges.Length)];
+        var chosen = new List<int>();
+        for (int i = 0; i < scale.Edges.Length; i++)
+        {
+            double power = Math.Log10(scale.Edges[i]);
+            if (Math.Abs(power - Math.Round(power)) < 1e-9 && Math.Round(power) % (stride - 1) == 0)
+                chosen.Add(i);
+        }
+
+        return chosen;
     }
 }

@@ -40,16 +40,17 @@ internal sealed class FacetMeshBuilder
     /// <param name="pixelsPerMetre">The scale of the picture, which tells how fine the facets must be.</param>
     /// <param name="window">The part of the plane that is seen.</param>
     /// <param name="averages">Whether cells of one region that differ at a shared point get their mean there.</param>
-    public static FacetMesh Build(CellScalar scalar, double pixelsPerMetre, ViewWindow window, bool averages)
+    public static FacetMesh Build(CellScalar scalar, double pixelsPerMetre, Box2D window, bool averages)
     {
-        var builder = new FacetMeshBuilder(scalar, pixelsPerMetre);
+        bool evens = averages && scalar.Degree > 0 && !scalar.IsContinuous;
+        var builder = new FacetMeshBuilder(evens ? RegionSmoothing.Of(scalar, window) : scalar, pixelsPerMetre);
         for (int cell = 0; cell < builder.mesh.CellCount; cell++)
         {
-            if (window.Reaches(builder.mesh, cell))
+            if (Sight.Reaches(builder.mesh, cell, window))
                 builder.AddCell(cell);
         }
 
-        return builder.Finish(averages && scalar.Degree > 0);
+        return builder.Finish(evens);
     }
 
     private void AddCell(int cell)

@@ -13,21 +13,22 @@ internal static class GridSampler
     public static List<(SKPoint Place, Vector2D Value)> Sample(CellVector vector, PlotFrame frame, double spacing)
     {
         Mesh mesh = vector.Mesh;
-        int columns = Math.Max(1, (int)Math.Floor(frame.Area.Width / spacing));
-        int rows = Math.Max(1, (int)Math.Floor(frame.Area.Height / spacing));
-        double left = frame.Area.MidX - ((columns - 1) * spacing / 2);
-        double top = frame.Area.MidY - ((rows - 1) * spacing / 2);
+        SKRect seen = SeenPart(mesh, frame);
+        int columns = Math.Max(1, (int)Math.Floor(seen.Width / spacing));
+        int rows = Math.Max(1, (int)Math.Floor(seen.Height / spacing));
+        double left = seen.MidX - ((columns - 1) * spacing / 2);
+        double top = seen.MidY - ((rows - 1) * spacing / 2);
         var found = new Vector2D?[columns * rows];
         CellPattern straight = CellPattern.Make(CellKind.Triangle, [1, 1, 1]);
-        var bent = new CellPattern[2];
+        var bent = new CellPattern?[2];
         Span<Point2D> reference = stackalloc Point2D[1];
         Span<Vector2D> value = stackalloc Vector2D[1];
         for (int cell = 0; cell < mesh.CellCount; cell++)
         {
-            if (!frame.View.Reaches(mesh, cell))
+            if (!Sight.Reaches(mesh, cell, frame.View))
                 continue;
-            CellPattern pattern = PatternFor(mesh, cell, straight, bent);
             var shape = new CellShape(mesh, cell);
+            CellPattern pattern = shape.IsFlat ? straight : DividedPattern(mesh.KindOf(cell), bent);
             for (int i = 0; i < pattern.Facets.Length; i += 3)
             {
                 Point2D ra = pattern.Reference[pattern.Facets[i]];
@@ -67,17 +68,19 @@ internal static class GridSampler
         return result;
     }
 
-    private static CellPattern PatternFor(Mesh mesh, int cell, CellPattern straight, CellPattern[] bent)
+    /// <summary>The part of the page that the mesh can cover; a grid centred on it keeps whole arrows inside a rectangle.</summary>
+    private static SKRect SeenPart(Mesh mesh, PlotFrame frame)
     {
-        // Straight triangles are one facet; anything else is divided so that facets follow its shape well.
-        bool isStraight = mesh.KindOf(cell) == CellKind.Triangle;
-        foreach (int edge in mesh.EdgesOf(cell))
-            isStraight &= mesh.SweepRadiansOf(edge) == 0;
-        if (isStraight)
-            return straight;
-        CellKind kind = mesh.KindOf(cell);
-        return bent[(int)kind] ??= CellPattern.Make(kind, kind == CellKind.Triangle ? [8, 8, 8] : [8, 8, 8, 8]);
+        Box2D bounds = Sight.BoundsOf(mesh);
+        SKPoint low = frame.ToPage(bounds.Lower);
+        SKPoint high = frame.ToPage(bounds.Upper);
+        var part = SKRect.Intersect(new SKRect(low.X, high.Y, high.X, low.Y), frame.Area);
+        return part.IsEmpty ? frame.Area : part;
     }
+
+    /// <summary>A pattern fine enough that its facets follow a bent cell well.</summary>
+    private static CellPattern DividedPattern(CellKind kind, CellPattern?[] known) =>
+        known[(int)kind] ??= CellPattern.Make(kind, kind == CellKind.Triangle ? [8, 8, 8] : [8, 8, 8, 8]);
 
     private static int First(float low, double start, double spacing) =>
         Math.Max(0, (int)Math.Ceiling(((low - start) / spacing) - 1e-9));

@@ -3,8 +3,14 @@ using FemCore2D.Geometry;
 namespace FemCore2D.Drawing;
 
 /// <summary>Traces on facets the lines of one value, and the outlines of the area above it.</summary>
+/// <remarks>
+/// Values a millionth of the whole range below a level count as having reached it: plateaus at a level, whose values
+/// differ by rounding only, then lie wholly on one side instead of being crossed at random.
+/// </remarks>
 internal static class LevelTracer
 {
+    private const double Slack = 1e-6;
+
     /// <summary>The lines along which the scalar has a value, higher values on their left.</summary>
     public static List<Polyline> Lines(FacetMesh mesh, double level)
     {
@@ -38,11 +44,12 @@ internal static class LevelTracer
     {
         ReadOnlySpan<double> values = mesh.Values;
         ReadOnlySpan<int> facets = mesh.Facets;
+        double reached = Reached(mesh, level);
         for (int side = 0; side < facets.Length; side += 3)
         {
-            bool a = values[facets[side]] >= level;
-            bool b = values[facets[side + 1]] >= level;
-            bool c = values[facets[side + 2]] >= level;
+            bool a = values[facets[side]] >= reached;
+            bool b = values[facets[side + 1]] >= reached;
+            bool c = values[facets[side + 2]] >= reached;
             if (a == b && b == c)
                 continue;
             int leaving = a && !b ? side : b && !c ? side + 1 : side + 2;
@@ -57,7 +64,8 @@ internal static class LevelTracer
         if (side < 0)
             return false;
         (int start, int end) = mesh.NodesOfSide(side);
-        return mesh.Values[start] >= level && mesh.Values[end] >= level;
+        double reached = Reached(mesh, level);
+        return mesh.Values[start] >= reached && mesh.Values[end] >= reached;
     }
 
     private static void AddPartAbove(FacetMesh mesh, int side, double level, SegmentChainer chainer)
@@ -65,8 +73,9 @@ internal static class LevelTracer
         if (side < 0)
             return;
         (int start, int end) = mesh.NodesOfSide(side);
-        bool isStartAbove = mesh.Values[start] >= level;
-        bool isEndAbove = mesh.Values[end] >= level;
+        double reached = Reached(mesh, level);
+        bool isStartAbove = mesh.Values[start] >= reached;
+        bool isEndAbove = mesh.Values[end] >= reached;
         if (!isStartAbove && !isEndAbove)
             return;
         int from = mesh.NodeSites[start];
@@ -79,6 +88,8 @@ internal static class LevelTracer
         else
             chainer.Add(KeyOf(mesh, side), Crossing(mesh, side, level), corner + to, mesh.Sites[to]);
     }
+
+    private static double Reached(FacetMesh mesh, double level) => level - (Slack * (mesh.Maximum - mesh.Minimum));
 
     /// <summary>The key of the crossing on a side: one for both sides of an edge where the scalar is continuous.</summary>
     private static int KeyOf(FacetMesh mesh, int side)

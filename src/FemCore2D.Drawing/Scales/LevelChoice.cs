@@ -13,8 +13,9 @@ internal static class LevelChoice
     /// <param name="count">About how many bands.</param>
     /// <param name="spacing">How they follow each other.</param>
     /// <param name="range">A range that is kept exactly, instead of being rounded outwards.</param>
+    /// <param name="unit">The unit, as degrees have round numbers of their own.</param>
     public static ImmutableArray<double> BandEdges(
-        double low, double high, int count, ValueSpacing spacing, ValueRange? range)
+        double low, double high, int count, ValueSpacing spacing, ValueRange? range, string unit)
     {
         if (range is { } given)
             (low, high) = (given.Low, given.High);
@@ -24,7 +25,7 @@ internal static class LevelChoice
         if (high - low <= 1e-9 * size || size == 0)
             return AroundConstant(low + ((high - low) / 2));
 
-        double step = RoundSteps.StepFor(high - low, count);
+        double step = unit == "°" ? RoundSteps.DegreeStepFor(high - low, count) : RoundSteps.StepFor(high - low, count);
         if (range is not null)
             return WithEnds(low, high, RoundSteps.Multiples(low, high, step));
         long first = (long)Math.Floor((low / step) + 1e-9);
@@ -37,9 +38,9 @@ internal static class LevelChoice
 
     /// <summary>Levels for lines strictly inside a range; none for a constant.</summary>
     public static ImmutableArray<double> LineLevels(
-        double low, double high, int count, ValueSpacing spacing, ValueRange? range)
+        double low, double high, int count, ValueSpacing spacing, ValueRange? range, string unit)
     {
-        ImmutableArray<double> edges = BandEdges(low, high, count, spacing, range);
+        ImmutableArray<double> edges = BandEdges(low, high, count, spacing, range, unit);
         double slack = 1e-9 * (high - low);
         return [.. edges.Where(level => level > low + slack && level < high - slack)];
     }
@@ -59,7 +60,7 @@ internal static class LevelChoice
         if (decades < 1e-6)
             return AroundConstant(high);
         if (decades < 0.7)
-            return BandEdges(low, high, count, ValueSpacing.Linear, keepsEnds ? new ValueRange(low, high) : null);
+            return BandEdges(low, high, count, ValueSpacing.Linear, keepsEnds ? new ValueRange(low, high) : null, "");
         double[] leads = decades > count ? [1] : decades * 3 > 1.3 * count ? [1] : decades * 6 > count ? [1, 2, 5] : [1, 1.5, 2, 3, 5, 7];
         int stride = Math.Max(1, (int)Math.Round(decades / count));
         var all = new List<double>();

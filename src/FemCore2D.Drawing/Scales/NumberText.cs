@@ -45,6 +45,14 @@ internal static class NumberText
         return Fixed(value, DecimalsFor([Math.Round(value, Math.Min(digits, 9))]));
     }
 
+    /// <summary>A number as short as it can be told; from a hundredth down and ten thousand up as a power of ten.</summary>
+    public static string Compact(double value)
+    {
+        double size = Math.Abs(value);
+        double power = size == 0 ? 0 : Math.Round(Math.Log10(size), 9);
+        return power % 1 == 0 && (power <= -2 || power >= 4) ? $"10{Exponent((int)power)}" : Short(value);
+    }
+
     /// <summary>An exponent in raised figures.</summary>
     public static string Exponent(int exponent)
     {

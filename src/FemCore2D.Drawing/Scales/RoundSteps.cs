@@ -12,6 +12,19 @@ internal static class RoundSteps
         return power * (lead < 1.5 ? 1 : lead < 3.2 ? 2 : lead < 7.1 ? 5 : 10);
     }
 
+    /// <summary>The step for angles in degrees: parts of a right angle rather than tens, where they are not small.</summary>
+    public static double DegreeStepFor(double range, double parts)
+    {
+        double raw = range / parts;
+        foreach (double step in (ReadOnlySpan<double>)[15, 30, 45, 90, 180])
+        {
+            if (raw > 9 && raw <= 1.25 * step)
+                return step;
+        }
+
+        return StepFor(range, parts);
+    }
+
     /// <summary>The multiples of a step within a range.</summary>
     public static List<double> Multiples(double low, double high, double step)
     {

@@ -3,7 +3,7 @@ using FemCore2D.Geometry;
 namespace FemCore2D.Drawing;
 
 /// <summary>A scalar that can be drawn: in each cell of a mesh it has a value at each point.</summary>
-public sealed class CellScalar
+public sealed partial class CellScalar
 {
     /// <summary>Describes a scalar by the rule that gives its values.</summary>
     /// <param name="mesh">The mesh.</param>
@@ -30,6 +30,9 @@ public sealed class CellScalar
     public int Degree { get; }
 
     internal CellEvaluator<double> Evaluator { get; }
+
+    /// <summary>Whether cells that meet are known to agree there.</summary>
+    internal bool IsContinuous { get; init; }
 
     /// <summary>A scalar given by its values at the vertices, linear (in quadrilaterals bilinear) between them.</summary>
     /// <param name="mesh">The mesh.</param>
@@ -61,7 +64,10 @@ public sealed class CellScalar
                 (double x, double y) = reference[i];
                 results[i] = ((1 - y) * ((v0 * (1 - x)) + (v1 * x))) + (y * ((v3 * (1 - x)) + (v2 * x)));
             }
-        });
+        })
+        {
+            IsContinuous = true,
+        };
     }
 
     /// <summary>A scalar with one value a cell, such as an error indicator.</summary>
@@ -85,13 +91,15 @@ public sealed class CellScalar
     {
         ArgumentNullException.ThrowIfNull(mesh);
         ArgumentNullException.ThrowIfNull(value);
-        var shapes = new CellShapes(mesh);
         return new CellScalar(mesh, 3, (cell, reference, results) =>
         {
-            CellShape shape = shapes.Of(cell);
+            var shape = new CellShape(mesh, cell);
             for (int i = 0; i < reference.Length; i++)
                 results[i] = value(shape.PlaceOf(reference[i]));
-        });
+        })
+        {
+            IsContinuous = true,
+        };
     }
 
     /// <summary>Another scalar, computed from the values of this one.</summary>
@@ -104,6 +112,9 @@ public sealed class CellScalar
             Evaluator(cell, reference, results);
             foreach (ref double value in results)
                 value = function(value);
-        });
+        })
+        {
+            IsContinuous = IsContinuous,
+        };
     }
 }

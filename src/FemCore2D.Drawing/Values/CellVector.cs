@@ -3,7 +3,7 @@ using FemCore2D.Geometry;
 namespace FemCore2D.Drawing;
 
 /// <summary>A vector that can be drawn: in each cell of a mesh it has a value at each point.</summary>
-public sealed class CellVector
+public sealed partial class CellVector
 {
     /// <summary>Describes a vector by the rule that gives its values.</summary>
     /// <param name="mesh">The mesh.</param>
@@ -35,10 +35,9 @@ public sealed class CellVector
     {
         ArgumentNullException.ThrowIfNull(mesh);
         ArgumentNullException.ThrowIfNull(value);
-        var shapes = new CellShapes(mesh);
         return new CellVector(mesh, 3, (cell, reference, results) =>
         {
-            CellShape shape = shapes.Of(cell);
+            var shape = new CellShape(mesh, cell);
             for (int i = 0; i < reference.Length; i++)
                 results[i] = value(shape.PlaceOf(reference[i]));
         });
