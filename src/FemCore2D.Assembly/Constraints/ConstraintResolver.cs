@@ -24,12 +24,17 @@ internal sealed class ConstraintResolver<T>
     private readonly int[] fixedBy;
     private readonly T[] scales;
 
+    /// <summary>For a fixed root, its factor to the unknown that was fixed first.</summary>
+    private readonly T[] fixedFactors;
+
     /// <summary>For a root, the condition that lets it float.</summary>
     private readonly int[] floatsBy;
 
     /// <summary>For an unknown, the condition whose target it belongs to.</summary>
     private readonly int[] targets;
-    private readonly HashSet<(int First, int Second, int Unknown)> touching = [];
+    private readonly List<(int Unknown, int Condition)> zeros = [];
+    private readonly List<Meeting<T>> meetings = [];
+    private readonly double[] functionScales;
 
     public ConstraintResolver(NodeSpace space, ImmutableList<Condition<T>> conditions)
     {
@@ -39,6 +44,8 @@ internal sealed class ConstraintResolver<T>
         parents = new int[count];
         factors = new T[count];
         scales = new T[count];
+        fixedFactors = new T[count];
+        functionScales = new double[conditions.Count];
         fixedBy = new int[count];
         floatsBy = new int[count];
         targets = new int[count];
@@ -48,6 +55,7 @@ internal sealed class ConstraintResolver<T>
         }
 
         Array.Fill(factors, T.One);
+        Array.Fill(fixedFactors, T.One);
         Array.Fill(fixedBy, Nobody);
         Array.Fill(floatsBy, Nobody);
         Array.Fill(targets, Nobody);
@@ -56,6 +64,7 @@ internal sealed class ConstraintResolver<T>
     public ResolvedConstraints<T> Resolve()
     {
         ForEach(ConditionKind.Paired, JoinPair);
+        FixZeros();
         ForEach(ConditionKind.Floating, Float);
         ForEach(ConditionKind.Fixed, Fix);
         ForEach(ConditionKind.FixedByPlace, Fix);
@@ -103,9 +112,20 @@ internal sealed class ConstraintResolver<T>
                         + "times the same value. Choose factors whose product round every closed way is 1.");
                 }
 
-                fixedBy[firstRoot] = index;
-                scales[firstRoot] = T.Zero;
+                zeros.Add((first, index));
             }
+        }
+    }
+
+    /// <summary>Fixes what a pair demands to be zero; only now, since joining moves roots.</summary>
+    private void FixZeros()
+    {
+        foreach ((int unknown, int index) in zeros)
+        {
+            int root = RootOf(unknown, out T factor);
+            fixedBy[root] = index;
+            fixedFactors[root] = factor;
+            scales[root] = T.Zero;
         }
     }
 
@@ -149,8 +169,19 @@ internal sealed class ConstraintResolver<T>
     private void Fix(int index)
     {
         Condition<T> condition = conditions[index];
-        foreach (int unknown in TargetOf(condition))
+        ImmutableArray<int> unknowns = TargetOf(condition);
+        T[] values = new T[unknowns.Length];
+        for (int i = 0; i < values.Length; i++)
         {
+            values[i] = condition.Kind == ConditionKind.Fixed ? T.One : ValueOf(condition, unknowns[i]);
+            functionScales[index] = condition.Kind == ConditionKind.Fixed
+                ? 0
+                : Math.Max(functionScales[index], Scalar.Magnitude(values[i]));
+        }
+
+        for (int i = 0; i < values.Length; i++)
+        {
+            int unknown = unknowns[i];
             int root = RootOf(unknown, out T factor);
             if (floatsBy[root] != Nobody)
             {
@@ -159,27 +190,16 @@ internal sealed class ConstraintResolver<T>
                     + "Make them one conductor, or leave a gap.");
             }
 
-            T value = ValueOf(condition, unknown);
             int rival = fixedBy[root];
             if (rival == Nobody)
             {
                 fixedBy[root] = index;
-                scales[root] = (condition.Kind == ConditionKind.Fixed ? T.One : value) / factor;
+                fixedFactors[root] = factor;
+                scales[root] = values[i] / factor;
             }
             else
             {
-                T known = factor * scales[root] * (conditions[rival].Kind == ConditionKind.Fixed ? conditions[rival].Value : T.One);
-                if (!Agree(known, value))
-                {
-                    throw new ConflictingConditionsException(
-                        $"At {space.NodePlaces[unknown]}, {condition} demands {value}, but {conditions[rival]} "
-                        + $"demands {known}. Let the two agree there, or leave a gap between them.");
-                }
-
-                if (rival != index)
-                {
-                    touching.Add((rival, index, unknown));
-                }
+                Meet(rival, index, unknown, factor * scales[root], values[i]);
             }
 
             if (targets[unknown] == Nobody)
@@ -189,14 +209,28 @@ internal sealed class ConstraintResolver<T>
         }
     }
 
-    private T ValueOf(Condition<T> condition, int unknown)
+    private void Meet(int rival, int index, int unknown, T known, T value)
     {
-        if (condition.Function is null)
+        var meeting = new Meeting<T>(
+            rival, index, unknown, known, value, Math.Max(functionScales[rival], functionScales[index]));
+        if (!meeting.Agrees(conditions[rival], conditions[index]))
         {
-            return condition.Value;
+            throw new ConflictingConditionsException(
+                $"At {space.NodePlaces[unknown]}, {conditions[index]} demands "
+                + $"{meeting.SecondValue(conditions[index])}, but {conditions[rival]} demands "
+                + $"{meeting.FirstValue(conditions[rival])}. Let the two agree there, or leave a gap between them.");
         }
 
-        T value = condition.Function(space.NodePlaces[unknown]);
+        // Where large targets overlap, one unknown stands for all that compare the same two numbers.
+        if (meetings.Count == 0 || meetings[^1] != meeting with { Unknown = meetings[^1].Unknown })
+        {
+            meetings.Add(meeting);
+        }
+    }
+
+    private T ValueOf(Condition<T> condition, int unknown)
+    {
+        T value = condition.Function!(space.NodePlaces[unknown]);
         return T.IsFinite(value)
             ? value
             : throw new ConflictingConditionsException(
@@ -262,6 +296,7 @@ internal sealed class ConstraintResolver<T>
             {
                 columns[i] = Nobody;
                 offsets[i] = factor * scales[root];
+                weights[i] = factor / fixedFactors[root];
                 continue;
             }
 
@@ -280,7 +315,8 @@ internal sealed class ConstraintResolver<T>
 
         NormalizeFloating(columns, weights);
         return new ResolvedConstraints<T>(
-            space, conditions, new ConstraintRows<T>(columns, weights, free), offsets, owners, targets, floatColumns, [.. touching]);
+            space, conditions, new ConstraintRows<T>(columns, weights, free), offsets, owners, targets,
+            floatColumns, [.. meetings]);
     }
 
     /// <summary>Makes the free unknown of a floating target its value itself.</summary>

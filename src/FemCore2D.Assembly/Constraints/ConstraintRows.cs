@@ -1,13 +1,18 @@
 using System.Numerics;
+using FemCore2D.Sparse;
 
 namespace FemCore2D.Assembly;
 
 /// <summary>
-/// The matrix C of <c>u = C v + g</c>, with at most one entry in each row, and the unknowns that share each column.
+/// The matrix C of <c>u = C v + g</c>, with at most one entry in each row, and the unknowns that share each column. It
+/// does not depend on given values, and is shared by all resolved constraints that differ in these only.
 /// </summary>
 internal sealed class ConstraintRows<T>
     where T : unmanaged, INumberBase<T>
 {
+    private readonly Lock reductionLock = new();
+    private MatrixReduction<T>? reduction;
+
     public ConstraintRows(int[] columns, T[] weights, int columnCount)
     {
         Columns = columns;
@@ -42,7 +47,10 @@ internal sealed class ConstraintRows<T>
     /// <summary>For each unknown the free unknown that it follows, -1 when it is fixed.</summary>
     public int[] Columns { get; }
 
-    /// <summary>For each unknown its multiple of the free unknown, or null when all are one.</summary>
+    /// <summary>
+    /// For each unknown its multiple of the free unknown or, if it is fixed, of the unknown that was fixed first; null
+    /// when all are one.
+    /// </summary>
     public T[]? Weights { get; }
 
     /// <summary>The number of free unknowns.</summary>
@@ -58,4 +66,18 @@ internal sealed class ConstraintRows<T>
 
     public ReadOnlySpan<int> MembersOf(int column) =>
         Members.AsSpan(MemberStarts[column], MemberStarts[column + 1] - MemberStarts[column]);
+
+    /// <summary>The reduction of matrices with a pattern; the last one is kept.</summary>
+    public MatrixReduction<T> ReductionOf(SparsePattern full)
+    {
+        lock (reductionLock)
+        {
+            if (reduction is null || !ReferenceEquals(reduction.Full, full))
+            {
+                reduction = new MatrixReduction<T>(this, full);
+            }
+
+            return reduction;
+        }
+    }
 }

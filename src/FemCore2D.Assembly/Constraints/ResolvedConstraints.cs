@@ -23,8 +23,7 @@ public sealed class ResolvedConstraints<T>
     private readonly int[] owners;
     private readonly int[] targets;
     private readonly int[] floatColumns;
-    private readonly ImmutableArray<(int First, int Second, int Unknown)> touching;
-    private MatrixReduction<T>? reduction;
+    private readonly ImmutableArray<Meeting<T>> meetings;
 
     internal ResolvedConstraints(
         NodeSpace space,
@@ -34,7 +33,7 @@ public sealed class ResolvedConstraints<T>
         int[] owners,
         int[] targets,
         int[] floatColumns,
-        ImmutableArray<(int First, int Second, int Unknown)> touching)
+        ImmutableArray<Meeting<T>> meetings)
     {
         Space = space;
         this.conditions = conditions;
@@ -43,7 +42,7 @@ public sealed class ResolvedConstraints<T>
         this.owners = owners;
         this.targets = targets;
         this.floatColumns = floatColumns;
-        this.touching = touching;
+        this.meetings = meetings;
     }
 
     /// <summary>The space.</summary>
@@ -72,7 +71,7 @@ public sealed class ResolvedConstraints<T>
         Condition<T> changed = conditions[index] with { Value = value };
         ImmutableList<Condition<T>> all = conditions.SetItem(index, changed);
         return new ResolvedConstraints<T>(
-            Space, all, rows, offsets, owners, targets, floatColumns, touching) { reduction = reduction };
+            Space, all, rows, offsets, owners, targets, floatColumns, meetings);
     }
 
     /// <summary>The number of the free unknown that an unknown of the space follows, or -1 when it is fixed.</summary>
@@ -115,7 +114,7 @@ public sealed class ResolvedConstraints<T>
     {
         ArgumentNullException.ThrowIfNull(matrix);
         CheckLength(rightHandSide.Length, nameof(rightHandSide));
-        CheckTouching();
+        CheckMeetings();
         T[] given = new T[Space.UnknownCount];
         AddGiven(given);
         T[] remainder = matrix.Multiply(given);
@@ -312,17 +311,18 @@ public sealed class ResolvedConstraints<T>
         }
     }
 
-    private void CheckTouching()
+    private void CheckMeetings()
     {
-        foreach ((int first, int second, int unknown) in touching)
+        foreach (Meeting<T> meeting in meetings)
         {
-            Condition<T> a = conditions[first];
-            Condition<T> b = conditions[second];
-            if (a.Kind == ConditionKind.Fixed && b.Kind == ConditionKind.Fixed && a.Value != b.Value)
+            Condition<T> first = conditions[meeting.First];
+            Condition<T> second = conditions[meeting.Second];
+            if (!meeting.Agrees(first, second))
             {
                 throw new ConflictingConditionsException(
-                    $"'{a.Name}' and '{b.Name}' touch at {Space.NodePlaces[unknown]}, but have the values {a.Value} and "
-                    + $"{b.Value}. Let the two agree, or leave a gap between them.");
+                    $"'{first.Name}' and '{second.Name}' touch at {Space.NodePlaces[meeting.Unknown]}, but have the "
+                    + $"values {meeting.FirstValue(first)} and {meeting.SecondValue(second)} there. Let the two agree, "
+                    + "or leave a gap between them.");
             }
         }
     }
@@ -337,15 +337,7 @@ public sealed class ResolvedConstraints<T>
                 nameof(matrix));
         }
 
-        MatrixReduction<T>? known = Volatile.Read(ref reduction);
-        if (known is not null && ReferenceEquals(known.Full, matrix.Pattern))
-        {
-            return known;
-        }
-
-        var made = new MatrixReduction<T>(rows, matrix.Pattern);
-        Volatile.Write(ref reduction, made);
-        return made;
+        return rows.ReductionOf(matrix.Pattern);
     }
 
     private void CheckLength(int length, string name)

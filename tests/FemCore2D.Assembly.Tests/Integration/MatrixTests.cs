@@ -9,7 +9,7 @@ namespace FemCore2D.Assembly.Tests;
 /// <summary>Matrices and vectors against integrals that are known.</summary>
 public class MatrixTests
 {
-    [Property(MaxTest = 60, Arbitrary = [typeof(FieldArbitraries)])]
+    [Property(MaxTest = 20, Arbitrary = [typeof(FieldArbitraries)])]
     public void MassOfOnesIsTheAreaWhateverTheWayItIsIntegrated(Mesh mesh)
     {
         for (int degree = 1; degree <= (mesh.QuadrilateralCount > 0 ? 3 : 5); degree++)
