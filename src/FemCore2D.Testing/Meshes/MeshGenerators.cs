@@ -128,10 +128,10 @@ public static class MeshGenerators
             .Straight(Corner(0, half), Corner(1, half), Corner(2, half), Corner(3, half), "core")
             .Divide(along, along);
         IEnumerable<Mesh> shells = Enumerable.Range(0, 4).Select(quarter => new QuadrilateralPatch(
-                new PatchSide(Corner(quarter, half), Corner(quarter, radius)),
-                new PatchSide(Corner(quarter, radius), Corner(quarter + 1, radius), 0.5 * Math.PI, "rim"),
-                new PatchSide(Corner(quarter + 1, radius), Corner(quarter + 1, half)),
-                new PatchSide(Corner(quarter + 1, half), Corner(quarter, half)),
+                new OutlinePiece(Corner(quarter, half), Corner(quarter, radius)),
+                new OutlinePiece(Corner(quarter, radius), Corner(quarter + 1, radius), 0.5 * Math.PI, "rim"),
+                new OutlinePiece(Corner(quarter + 1, radius), Corner(quarter + 1, half)),
+                new OutlinePiece(Corner(quarter + 1, half), Corner(quarter, half)),
                 "shell")
             .Divide(layers, along));
         return Mesh.Join([core, .. shells]);

@@ -59,8 +59,8 @@ internal static class CellChecks
         int count = mesh.EdgesOf(cell).Length;
         for (int i = 0; i < count; i++)
         {
-            EdgeCurve side = mesh.SideOf(cell, i);
-            EdgeCurve before = mesh.SideOf(cell, i > 0 ? i - 1 : count - 1).Reversed;
+            OutlinePiece side = mesh.SideOf(cell, i);
+            OutlinePiece before = mesh.SideOf(cell, i > 0 ? i - 1 : count - 1).Reversed();
             double angle = Math.Atan2(side.Chord.Cross(before.Chord), side.Chord.Dot(before.Chord))
                 + (0.5 * (side.SweepRadians - before.SweepRadians));
             if (angle <= FlatSine || angle >= (2 * Math.PI) - FlatSine)
@@ -70,13 +70,24 @@ internal static class CellChecks
 
             for (int j = 0; j < i; j++)
             {
-                if (CurveCrossing.Cross(side, mesh.SideOf(cell, j)))
+                if (Cross(side, mesh.SideOf(cell, j)))
                 {
                     throw Fault(mesh, cell, "is crossed by one of its arcs", remedy);
                 }
             }
         }
     }
+
+    /// <summary>Whether two sides cross or touch beside their common ends.</summary>
+    private static bool Cross(in OutlinePiece first, in OutlinePiece second)
+    {
+        Span<Point2D> contacts = stackalloc Point2D[2];
+        double tolerance = OutlineChecks.RelativeTolerance * first.Chord.Length;
+        return PieceContacts.Find(FormOf(first), FormOf(second), tolerance, contacts) > 0;
+    }
+
+    /// <summary>The equation of a side.</summary>
+    public static PieceForm FormOf(in OutlinePiece side) => new(side.Start, side.End, side.SweepRadians);
 
     private static InvalidMeshException Fault(Mesh mesh, int cell, string fault, string remedy)
     {

@@ -55,8 +55,7 @@ internal sealed class DefinitionReader
             CellChecks.CheckUnfolded(mesh, cell, "List the vertices of a convex cell counterclockwise.");
         }
 
-        (Point2D low, Point2D high) = mesh.Bounds;
-        RimChecks.Check(mesh, definition.RelativeTolerance * low.DistanceTo(high), Remedy);
+        RimChecks.Check(mesh, definition.RelativeTolerance * mesh.Bounds.Diagonal, Remedy);
         return mesh;
     }
 
