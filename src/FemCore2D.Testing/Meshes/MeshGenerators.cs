@@ -9,7 +9,8 @@ public static class MeshGenerators
 {
     /// <summary>Meshes of all the kinds of this class, as they are or refined in whole or in part.</summary>
     public static Gen<Mesh> All() =>
-        from mesh in Gen.OneOf(Grids(), RingSectors(), Rings(), Fans(), Discs())
+        from mesh in Gen.OneOf(
+            Grids(), RingSectors(), Rings(), Fans(), Discs(), OfSections(SectionGenerators.NestedCircles()))
         from rounds in Gen.Choose(0, 2)
         from refined in Refined(mesh, rounds)
         select refined;
@@ -83,6 +84,14 @@ public static class MeshGenerators
         from share in NumberGenerators.Between(0.3, 0.6)
         let along = Math.Max(wish, LeastAround(0.5 * Math.PI, 1, (1 - share) / layers))
         select Disc(centre, radius, along, layers, share);
+
+    /// <summary>The meshes that the mesher makes of cross-sections without being told a size: as coarse as it will.</summary>
+    /// <param name="sections">The cross-sections.</param>
+    public static Gen<Mesh> OfSections(Gen<CrossSection> sections)
+    {
+        ArgumentNullException.ThrowIfNull(sections);
+        return sections.Select(section => Mesher.Generate(section).Mesh);
+    }
 
     private static Gen<Point2D> Centres =>
         from x in NumberGenerators.Between(-5, 5)

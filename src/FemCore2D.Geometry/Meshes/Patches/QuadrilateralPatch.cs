@@ -134,10 +134,11 @@ public sealed class QuadrilateralPatch
         double[] u = (alongGrading ?? Grading.Even).Fractions(along);
         double[] v = (acrossGrading ?? Grading.Even).Fractions(across);
         Mesh mesh = new PatchGrid(Sides, [.. given.Select(side => side.Boundary)], u, v).ToMesh(Region);
+        var checks = new CellChecks(mesh);
         for (int cell = 0; cell < mesh.CellCount; cell++)
         {
-            CellChecks.CheckUnfolded(
-                mesh, cell, $"The patch of region '{Region}' is folded there: list its sides counterclockwise, bend them " +
+            checks.CheckUnfolded(
+                cell, $"The patch of region '{Region}' is folded there: list its sides counterclockwise, bend them " +
                 "less, or divide it into several patches.");
         }
 
