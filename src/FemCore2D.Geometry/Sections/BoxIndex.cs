@@ -5,7 +5,7 @@ internal sealed class BoxIndex(Box2D[] boxes)
 {
     private readonly BoxTree tree = new([.. boxes.Select(Converted)]);
 
-    /// <summary>Puts the numbers of all boxes that meet a box into a list, ascending.</summary>
+    /// <summary>Puts the numbers of all boxes that meet a box into a list.</summary>
     public void Query(Box2D box, List<int> hits)
     {
         hits.Clear();
@@ -13,7 +13,6 @@ internal sealed class BoxIndex(Box2D[] boxes)
         {
             Collector collector = new(boxes, box, hits);
             tree.VisitIn(Converted(box), ref collector);
-            hits.Sort();
         }
     }
 
