@@ -108,7 +108,8 @@ public static class SectionGeoJson
     {
         if (length > LargestLength)
         {
-            throw new MalformedFileException($"The text is longer than {LargestLength} bytes, the most that is read. Divide the section.", 0);
+            throw new MalformedFileException(
+                $"The text is longer than {LargestLength} bytes, the most that is read. Divide the section.", 0);
         }
     }
 }

@@ -12,7 +12,8 @@ internal sealed class SectionGeoJsonReader(JsonItem root)
     {
         if (root.Kind != JsonTokenType.StartObject || root.Member("type")?.Text != "FeatureCollection")
         {
-            throw new MalformedFileException("the text is no object of type FeatureCollection. Put the features into one.", root.Line);
+            throw new MalformedFileException(
+                "the text is no object of type FeatureCollection. Put the features into one.", root.Line);
         }
 
         if (root.Member("metresPerUnit") is JsonItem unit)
@@ -98,7 +99,8 @@ internal sealed class SectionGeoJsonReader(JsonItem root)
 
         return innerBoundary is null
             ? Shape.Inside(Outline.Circle(centre, radius, boundary))
-            : throw new MalformedFileException("the circle has an innerBoundary but no innerRadius. Add the radius, or leave the boundary out.", text.Line);
+            : throw new MalformedFileException(
+                "the circle has an innerBoundary but no innerRadius. Add the radius, or leave the boundary out.", text.Line);
     }
 
     private Shape Polygon(FeatureText text)
@@ -124,7 +126,9 @@ internal sealed class SectionGeoJsonReader(JsonItem root)
             if (path.Start != path.End)
             {
                 throw new MalformedFileException(
-                    $"the ring is open: it begins at {path.Start} and ends at {path.End}. Repeat its first position at its end.", rings[i].Line);
+                    $"the ring is open: it begins at {path.Start} and ends at {path.End}. "
+                    + "Repeat its first position at its end.",
+                    rings[i].Line);
             }
 
             outlines.Add(path.Close());

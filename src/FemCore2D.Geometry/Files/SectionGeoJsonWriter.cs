@@ -15,7 +15,8 @@ internal sealed class SectionGeoJsonWriter(Utf8JsonWriter json, double metresPer
         if (!(metresPerUnit > 0 && double.IsFinite(metresPerUnit)))
         {
             throw new ArgumentOutOfRangeException(
-                nameof(metresPerUnit), metresPerUnit, "The unit of a file needs a positive, finite length. Use 0.001 for millimetres.");
+                nameof(metresPerUnit), metresPerUnit, "The unit of a file needs a positive, finite length. "
+                    + "Use 0.001 for millimetres.");
         }
 
         // One feature a line: short enough to read, and a change shows as the lines that it touches.

@@ -52,7 +52,8 @@ public sealed partial class Outline
         if (Math.Min(across, along) < -tolerance)
         {
             throw new ArgumentOutOfRangeException(
-                nameof(radius), radius, $"The corners of the rounded rectangle at {corner} do not fit: use a radius of at most half the shorter side.");
+                nameof(radius), radius, $"The corners of the rounded rectangle at {corner} do not fit: "
+                    + "use a radius of at most half the shorter side.");
         }
 
         // A side that the corners leave no room for is left out.
@@ -83,7 +84,8 @@ public sealed partial class Outline
     {
         if (corners.Length < 3)
         {
-            throw new ArgumentException($"A polygon needs at least three corners, and {corners.Length} were given.", nameof(corners));
+            throw new ArgumentException(
+                $"A polygon needs at least three corners, and {corners.Length} were given.", nameof(corners));
         }
 
         OutlinePiece[] pieces = new OutlinePiece[corners.Length];
@@ -168,7 +170,8 @@ public sealed partial class Outline
         if (!(sweepRadians > 0 && sweepRadians < 2 * Math.PI))
         {
             throw new ArgumentOutOfRangeException(
-                nameof(sweepRadians), sweepRadians, $"The {shape} at {place} needs a sweep above 0 and below a full turn. For a full turn use a circle or a ring.");
+                nameof(sweepRadians), sweepRadians, $"The {shape} at {place} needs a sweep above 0 and below a full turn. "
+                    + "For a full turn use a circle or a ring.");
         }
     }
 }

@@ -64,7 +64,8 @@ public sealed partial class Outline
         double tolerance = OutlineChecks.ToleranceOf(bounds);
         if (!double.IsFinite(tolerance))
         {
-            throw new InvalidSectionException($"The outline that begins at {chain[0].Start} is too large for its size to be a number. Use metres.");
+            throw new InvalidSectionException(
+                $"The outline that begins at {chain[0].Start} is too large for its size to be a number. Use metres.");
         }
 
         chain = OutlineChecks.Joined(chain, tolerance, closed: true);

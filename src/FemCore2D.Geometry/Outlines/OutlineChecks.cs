@@ -26,13 +26,15 @@ internal static class OutlineChecks
         if (!piece.Start.IsFinite || !piece.End.IsFinite || !double.IsFinite(piece.SweepRadians))
         {
             throw new InvalidSectionException(
-                $"Piece {index} ({piece}) has a coordinate or sweep that is not a finite number. Check the values that the outline is computed from.");
+                $"Piece {index} ({piece}) has a coordinate or sweep that is not a finite number. "
+                + "Check the values that the outline is computed from.");
         }
 
         if (Math.Abs(piece.SweepRadians) >= 2 * Math.PI)
         {
             throw new InvalidSectionException(
-                $"Piece {index} ({piece}) sweeps a full turn or more. Draw a circle with Outline.Circle, or divide the arc into two.");
+                $"Piece {index} ({piece}) sweeps a full turn or more. "
+                + "Draw a circle with Outline.Circle, or divide the arc into two.");
         }
 
         if (piece.Boundary is not null && string.IsNullOrWhiteSpace(piece.Boundary))
@@ -49,7 +51,8 @@ internal static class OutlineChecks
             if (pieces[i].Start.DistanceTo(pieces[i].End) <= tolerance)
             {
                 throw new InvalidSectionException(
-                    $"Piece {i} ({pieces[i]}) has no length: its ends are closer than the tolerance of {tolerance:G3} m. Remove the repeated point.");
+                    $"Piece {i} ({pieces[i]}) has no length: its ends are closer than the tolerance of {tolerance:G3} m. "
+                    + "Remove the repeated point.");
             }
         }
     }
@@ -65,7 +68,8 @@ internal static class OutlineChecks
             if (pieces[before].End.DistanceTo(pieces[i].Start) > tolerance)
             {
                 throw new InvalidSectionException(i == 0
-                    ? $"The outline is open: it ends at {pieces[before].End} but began at {pieces[0].Start}. Add the piece that closes it."
+                    ? $"The outline is open: it ends at {pieces[before].End} but began at {pieces[0].Start}. "
+                        + "Add the piece that closes it."
                     : $"The chain is broken: piece {before} ends at {pieces[before].End} but piece {i} begins at {pieces[i].Start}. Begin each piece where the one before ends.");
             }
 
@@ -95,7 +99,8 @@ internal static class OutlineChecks
                 if (j > i && FindContact(forms[i], forms[j], isNext, isBefore, tolerance, contacts) is Point2D place)
                 {
                     throw new InvalidSectionException(
-                        $"The outline crosses or touches itself at {place}, where the {parts[i]} meets the {parts[j]}. Draw it as separate outlines, or cut an inner edge out as a hole.");
+                        $"The outline crosses or touches itself at {place}, where the {parts[i]} meets the {parts[j]}. "
+                        + "Draw it as separate outlines, or cut an inner edge out as a hole.");
                 }
             }
         }

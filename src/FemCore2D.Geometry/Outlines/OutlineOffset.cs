@@ -32,7 +32,8 @@ internal static class OutlineOffset
         {
             throw new InvalidSectionException(loops.Count == 0
                 ? $"Nothing is left of the {outline} at an offset of {distance:G6} m. Use a smaller distance inward."
-                : $"At an offset of {distance:G6} m the {outline} becomes {loops.Count} outlines. Use a smaller distance, or draw the parts as shapes of their own.");
+                : $"At an offset of {distance:G6} m the {outline} becomes {loops.Count} outlines. "
+                    + "Use a smaller distance, or draw the parts as shapes of their own.");
         }
 
         Outline result = Outline.Of(loops[0]);

@@ -32,7 +32,8 @@ public sealed class OutlinePath
         if (last.Start == last.End)
         {
             throw new InvalidSectionException(
-                $"Piece {before.count} ({last}) has no length. Leave out the repeated point, and draw a circle with Outline.Circle.");
+                $"Piece {before.count} ({last}) has no length. "
+                + "Leave out the repeated point, and draw a circle with Outline.Circle.");
         }
 
         this.before = before;
@@ -95,7 +96,8 @@ public sealed class OutlinePath
         if (cross == 0 && dot >= 0)
         {
             throw new InvalidSectionException(
-                $"Piece {count} cannot be an arc from {End} through {through} to {end}: the points lie in line, and the middle one is not between the others. Choose a point on the arc.");
+                $"Piece {count} cannot be an arc from {End} through {through} to {end}: "
+                + "the points lie in line, and the middle one is not between the others. Choose a point on the arc.");
         }
 
         double sweep = 2 * Math.Atan2(Math.Abs(cross), -dot);

@@ -58,23 +58,10 @@ internal static class PieceContacts
     private static void TryRoot(
         in PieceForm first, in PieceForm second, double u, double tolerance, Span<Point2D> contacts, ref int count)
     {
-        if (!(u >= 0 && u <= 1))
+        if (u >= 0 && u <= 1)
         {
-            return;
+            Accept(first, second, first.AtParameter(u).Point, tolerance, contacts, ref count);
         }
-
-        // One secant step on the equation itself removes the rounding of the coefficients.
-        double step = u < 0.5 ? 1e-6 : -1e-6;
-        (Point2D point, _) = first.AtParameter(u);
-        double value = second.Side(point);
-        double slope = (second.Side(first.AtParameter(u + step).Point) - value) / step;
-        double better = u - (value / slope);
-        if (Math.Abs(better - u) < 1e-7 && better >= 0 && better <= 1)
-        {
-            point = first.AtParameter(better).Point;
-        }
-
-        Accept(first, second, point, tolerance, contacts, ref count);
     }
 
     private static void Accept(

@@ -141,7 +141,8 @@ public sealed class Shape
                     && OutlineChecks.FindContact(forms[i], forms[j], false, false, tolerance, contacts) is Point2D place)
                 {
                     throw new InvalidSectionException(
-                        $"A hole of the shape meets its outer outline or another hole at {place}. Draw that part into the outer outline, or paint the shapes one over the other.");
+                        $"A hole of the shape meets its outer outline or another hole at {place}. "
+                        + "Draw that part into the outer outline, or paint the shapes one over the other.");
                 }
             }
         }
@@ -151,7 +152,8 @@ public sealed class Shape
             Point2D place = Holes[i].Pieces[0].Start;
             if (!Outer.Contains(place))
             {
-                throw new InvalidSectionException($"The hole at {place} lies outside its shape. Leave it out, or move it inside.");
+                throw new InvalidSectionException(
+                    $"The hole at {place} lies outside its shape. Leave it out, or move it inside.");
             }
 
             for (int j = 0; j < Holes.Length; j++)

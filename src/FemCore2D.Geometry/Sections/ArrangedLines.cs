@@ -90,11 +90,12 @@ internal sealed class ArrangedLines
         (int before, int after) = pieces[first].End == vertex ? (first, second) : (second, first);
         ArrangedPiece into = pieces[before];
         ArrangedPiece from = pieces[after];
-        if (into.LeftRegion != from.LeftRegion || into.RightRegion != from.RightRegion || into.Boundaries != from.Boundaries)
+        if (into.Boundaries != from.Boundaries)
         {
             return;
         }
 
+        // Their regions are the same, since nothing else divides the plane there.
         pieces[before] = into with { End = from.End, SweepRadians = into.SweepRadians + from.SweepRadians };
         isGone[after] = true;
         (int one, int other) = meeting[from.End];

@@ -142,7 +142,8 @@ internal sealed class Arranger
                 if (isOutside)
                 {
                     throw new InvalidSectionException(
-                        $"The sheet '{sheet}' leaves the section at {windings.MiddleOf(piece)}. Fill a region there, or end the sheet inside.");
+                        $"The sheet '{sheet}' leaves the section at {windings.MiddleOf(piece)}. "
+                        + "Fill a region there, or end the sheet inside.");
                 }
 
                 sets.Add(sheet);
@@ -200,7 +201,8 @@ internal sealed class Arranger
             if (RegionOf(top) < 0)
             {
                 throw new InvalidSectionException(
-                    $"The fixed point '{points[i].Name}' at {points[i].Place} lies outside the section. Move it into a region, or fill one there.");
+                    $"The fixed point '{points[i].Name}' at {points[i].Place} lies outside the section. "
+                    + "Move it into a region, or fill one there.");
             }
         }
     }

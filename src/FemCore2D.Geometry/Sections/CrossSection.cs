@@ -70,7 +70,11 @@ public sealed class CrossSection
     /// <param name="outline">The outline; the boundary names of its pieces become boundaries of the section.</param>
     /// <param name="region">The region that it becomes part of.</param>
     /// <exception cref="InvalidSectionException">A name already stands for something of another kind.</exception>
-    public CrossSection Fill(Outline outline, string region) => Fill(Shape.Inside(outline), region);
+    public CrossSection Fill(Outline outline, string region)
+    {
+        ArgumentNullException.ThrowIfNull(outline);
+        return Fill(Shape.Inside(outline), region);
+    }
 
     /// <summary>Paints a shape; what was painted in its holes before stays.</summary>
     /// <param name="shape">The shape; the boundary names of its pieces become boundaries of the section.</param>
@@ -86,7 +90,11 @@ public sealed class CrossSection
     /// <summary>Cuts the inside of an outline out of what was painted before.</summary>
     /// <param name="outline">The outline; the boundary names of its pieces become boundaries of the section.</param>
     /// <exception cref="InvalidSectionException">A name already stands for something of another kind.</exception>
-    public CrossSection Hole(Outline outline) => Hole(Shape.Inside(outline));
+    public CrossSection Hole(Outline outline)
+    {
+        ArgumentNullException.ThrowIfNull(outline);
+        return Hole(Shape.Inside(outline));
+    }
 
     /// <summary>Cuts a shape out of what was painted before.</summary>
     /// <param name="shape">The shape; the boundary names of its pieces become boundaries of the section.</param>
@@ -134,12 +142,14 @@ public sealed class CrossSection
         ArgumentException.ThrowIfNullOrWhiteSpace(name);
         if (!place.IsFinite)
         {
-            throw new InvalidSectionException($"The fixed point '{name}' at {place} is not finite. Check the values that it is computed from.");
+            throw new InvalidSectionException(
+                $"The fixed point '{name}' at {place} is not finite. Check the values that it is computed from.");
         }
 
         if (kinds.GetValueOrDefault(name) == PointKind)
         {
-            throw new InvalidSectionException($"There are two fixed points '{name}', the second at {place}. Give each its own name.");
+            throw new InvalidSectionException(
+                $"There are two fixed points '{name}', the second at {place}. Give each its own name.");
         }
 
         return With(new NamedPoint(place, name), Bounds, [(name, PointKind)]);
@@ -225,7 +235,10 @@ public sealed class CrossSection
     private CrossSection With(SectionItem item, Box2D bounds, IEnumerable<(string Name, string Kind)> names)
     {
         ImmutableDictionary<string, string> allKinds = kinds;
-        ImmutableList<string>[] lists = [(ImmutableList<string>)Regions, (ImmutableList<string>)Boundaries, (ImmutableList<string>)Points];
+        ImmutableList<string>[] lists =
+        [
+            (ImmutableList<string>)Regions, (ImmutableList<string>)Boundaries, (ImmutableList<string>)Points,
+        ];
         foreach ((string name, string kind) in names)
         {
             if (!allKinds.TryGetValue(name, out string? taken))
@@ -237,7 +250,8 @@ public sealed class CrossSection
             else if (taken != kind)
             {
                 throw new InvalidSectionException(
-                    $"The name '{name}' is given to a {kind} but already stands for a {taken} of the section. Give each its own name.");
+                    $"The name '{name}' is given to a {kind} but already stands for a {taken} of the section. "
+                    + "Give each its own name.");
             }
         }
 

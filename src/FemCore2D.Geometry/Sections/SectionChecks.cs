@@ -14,7 +14,8 @@ internal static class SectionChecks
             if (!drawnShapes.Contains(shape))
             {
                 throw new InvalidSectionException(
-                    $"The {shapes[shape].Shape} is too small for the section: lengths below {tolerance:G3} m count as nothing in it. Leave it out, or divide the section.");
+                    $"The {shapes[shape].Shape} is too small for the section: "
+                    + $"lengths below {tolerance:G3} m count as nothing in it. Leave it out, or divide the section.");
             }
         }
     }
@@ -64,7 +65,8 @@ internal static class SectionChecks
             if (!seen.Contains(name))
             {
                 throw new InvalidSectionException(
-                    $"The boundary '{name}' is painted over completely, or lies outside the section. Draw its outline after what covers it, or draw it as a sheet.");
+                    $"The boundary '{name}' is painted over completely, or lies outside the section. "
+                    + "Draw its outline after what covers it, or draw it as a sheet.");
             }
         }
     }

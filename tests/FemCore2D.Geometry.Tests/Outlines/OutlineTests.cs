@@ -132,7 +132,7 @@ public class OutlineTests
         AssertInvalid("touches itself", () => Outline.Polygon(O, new(2, 0), new(1, 0), new(1, 1)));
         AssertInvalid("touches itself at (1, 1)", () => Outline.Polygon(O, new(1, 1), new(2, 0), new(2, 2), new(1, 1), new(0, 2)));
         AssertInvalid("touches itself", () => Outline.Of([new(O, new(1, 0), 1), new(new(1, 0), O, -1)]));
-        AssertInvalid("crosses or touches itself at (1, 1)", () => Outline.StartAt(O).ArcTo(new(2, 0), -Math.PI).StraightTo(new(1, 0.5)).StraightTo(new(1, 2)).Close());
+        AssertInvalid("crosses or touches itself at (1, 1)", () => Outline.StartAt(O).ArcTo(new(2, 0), -Math.PI).StraightTo(new(1, 0.5)).StraightTo(new(1, 2)).StraightTo(new(-1, 2)).Close());
         AssertInvalid("no length", () => Outline.Polygon(O, new(1, 0), new(1, 1e-12), new(0, 1)));
         AssertInvalid("no length", () => Outline.Polygon(O, O, new(0, 1)));
         AssertInvalid("not a finite number", () => Outline.Polygon(O, new(double.NaN, 0), new(0, 1)));

@@ -53,8 +53,9 @@ internal static class ArrangementAudit
         });
         foreach (var star in leaving.GroupBy(l => l.Vertex))
         {
-            // On a circle small enough to cut every piece once, their order is that of the angles.
-            double radius = 0.2 * star.Min(l => l.Line.Length);
+            // On a circle small enough to cut every piece once, their order is that of the angles. It must stay large
+            // beside the tolerance, within which pieces may bend; shorter ones show by their chords where they lead.
+            double radius = 0.2 * star.Select(l => l.Line.Length).Where(l => l > 100 * arrangement.Tolerance).DefaultIfEmpty(1).Min();
             Point2D centre = arrangement.Vertices[star.Key];
             var sorted = star.Select(l => (l.Left, l.Right, Angle: AngleAt(l.Line, centre, radius))).OrderBy(l => l.Angle).ToArray();
             for (int i = 0; i < sorted.Length; i++)
@@ -85,6 +86,11 @@ internal static class ArrangementAudit
 
     private static double AngleAt(OutlinePiece line, Point2D centre, double radius)
     {
+        if (radius > line.Length)
+        {
+            return Math.Atan2(line.Chord.Y, line.Chord.X);
+        }
+
         double fraction = line.IsStraight
             ? radius / line.Length
             : 2 * Math.Asin(radius / (2 * line.Radius)) / Math.Abs(line.SweepRadians);

@@ -159,16 +159,20 @@ public class ArrangementTests
     [Fact]
     public void A_thousand_overlapping_outlines_arrange_quickly()
     {
-        CrossSection section = Thousand();
-        section.Arrange();
-        Stopwatch watch = Stopwatch.StartNew();
-        Arrangement arrangement = Thousand().Arrange();
-        watch.Stop();
-        Assert.True(arrangement.Pieces.Length > 6000);
-        Assert.True(watch.Elapsed.TotalSeconds < 1, $"It took {watch.Elapsed.TotalSeconds} s.");
+        // The quickest of some attempts, since the machine may be busy with something else.
+        double quickest = double.PositiveInfinity;
+        for (int attempt = 0; attempt < 10 && quickest > 0.5; attempt++)
+        {
+            CrossSection section = Thousand();
+            Stopwatch watch = Stopwatch.StartNew();
+            Assert.True(section.Arrange().Pieces.Length > 6000);
+            quickest = Math.Min(quickest, watch.Elapsed.TotalSeconds);
+        }
+
+        Assert.True(quickest < 0.5, $"It took {quickest} s.");
     }
 
-    internal static CrossSection Thousand()
+    private static CrossSection Thousand()
     {
         CrossSection section = CrossSection.Empty.Fill(Outline.Rectangle(new Point2D(-1, -1), 34, 34), "base");
         for (int i = 0; i < 1000; i++)

@@ -53,7 +53,7 @@ public class RandomSectionTests
         Assert.True(sum <= 1604 + 1e-9);
     }
 
-    [Property(Arbitrary = [typeof(LatticeShapes)], MaxTest = 300)]
+    [Property(Arbitrary = [typeof(LatticeShapes)], MaxTest = 150)]
     public void Lines_at_just_about_the_tolerance_are_arranged_soundly_or_refused(ShapeSpec[] shapes, int seed)
     {
         // Near coincidences from well below the tolerance, here 8e-8, to well above it.
