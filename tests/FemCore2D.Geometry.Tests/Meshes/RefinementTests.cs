@@ -3,7 +3,7 @@ using FsCheck.Xunit;
 
 namespace FemCore2D.Geometry.Tests;
 
-[Properties(Arbitrary = [typeof(FieldArbitraries)], MaxTest = 40)]
+[Properties(Arbitrary = [typeof(FieldArbitraries)], MaxTest = 25)]
 public class RefinementTests
 {
     [Property]

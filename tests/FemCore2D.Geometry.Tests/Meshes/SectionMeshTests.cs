@@ -6,7 +6,7 @@ using FsCheck.Xunit;
 namespace FemCore2D.Geometry.Tests;
 
 /// <summary>Meshes of the mesher, cusps between touching circles included.</summary>
-[Properties(Arbitrary = [typeof(SectionMeshes)], MaxTest = 25)]
+[Properties(Arbitrary = [typeof(SectionMeshes)], MaxTest = 12)]
 public class SectionMeshTests
 {
     [Property]
