@@ -18,8 +18,10 @@ public sealed class CapacitanceMatrix
 {
     private readonly double[,] maxwell;
 
-    internal CapacitanceMatrix(ImmutableArray<string> conductors, double[,] maxwell, CoordinateSystem coordinates)
+    internal CapacitanceMatrix(
+        ImmutableArray<string> conductors, double[,] maxwell, CoordinateSystem coordinates, SolveReport report)
     {
+        Report = report;
         Conductors = conductors;
         this.maxwell = maxwell;
         Coordinates = coordinates;
@@ -30,6 +32,9 @@ public sealed class CapacitanceMatrix
 
     /// <summary>Whether the entries are per metre of length (plane) or of the whole body (axisymmetric).</summary>
     public CoordinateSystem Coordinates { get; }
+
+    /// <summary>What the solution took.</summary>
+    public SolveReport Report { get; }
 
     /// <summary>
     /// The charge on <paramref name="conductor"/> per volt on <paramref name="driven"/>, all other conductors being at
