@@ -28,6 +28,9 @@ public static class FieldArbitraries
     /// <summary>Polynomials of degree 0 to 5.</summary>
     public static Arbitrary<Polynomial2D> Polynomials() => PolynomialGenerators.UpToDegree(5).ToArbitrary();
 
+    /// <summary>Small cross-sections of every kind.</summary>
+    public static Arbitrary<CrossSection> CrossSections() => SectionGenerators.All().ToArbitrary();
+
     /// <summary>Small meshes of every kind.</summary>
     public static Arbitrary<Mesh> Meshes() => MeshGenerators.All().ToArbitrary();
 }

@@ -3,7 +3,7 @@ namespace FemCore2D.Geometry;
 /// <summary>Finds which of many boxes meet another.</summary>
 internal sealed class BoxIndex(Box2D[] boxes)
 {
-    private readonly BoxTree tree = new([.. boxes.Select(Converted)]);
+    private readonly BoxTree tree = new(boxes);
 
     /// <summary>Puts the numbers of all boxes that meet a box into a list.</summary>
     public void Query(Box2D box, List<int> hits)
@@ -12,11 +12,9 @@ internal sealed class BoxIndex(Box2D[] boxes)
         if (boxes.Length > 0)
         {
             Collector collector = new(boxes, box, hits);
-            tree.VisitIn(Converted(box), ref collector);
+            tree.VisitIn(box, ref collector);
         }
     }
-
-    private static BoundingBox Converted(Box2D box) => new(box.Lower.X, box.Lower.Y, box.Upper.X, box.Upper.Y);
 
     private readonly struct Collector(Box2D[] boxes, Box2D target, List<int> hits) : BoxTree.IVisitor
     {

@@ -9,7 +9,8 @@ public static class MeshGenerators
 {
     /// <summary>Meshes of all the kinds of this class, as they are or refined in whole or in part.</summary>
     public static Gen<Mesh> All() =>
-        from mesh in Gen.OneOf(Grids(), RingSectors(), Rings(), Fans(), Discs())
+        from mesh in Gen.OneOf(
+            Grids(), RingSectors(), Rings(), Fans(), Discs(), OfSections(SectionGenerators.NestedCircles()))
         from rounds in Gen.Choose(0, 2)
         from refined in Refined(mesh, rounds)
         select refined;
@@ -84,6 +85,14 @@ public static class MeshGenerators
         let along = Math.Max(wish, LeastAround(0.5 * Math.PI, 1, (1 - share) / layers))
         select Disc(centre, radius, along, layers, share);
 
+    /// <summary>The meshes that the mesher makes of cross-sections without being told a size: as coarse as it will.</summary>
+    /// <param name="sections">The cross-sections.</param>
+    public static Gen<Mesh> OfSections(Gen<CrossSection> sections)
+    {
+        ArgumentNullException.ThrowIfNull(sections);
+        return sections.Select(section => Mesher.Generate(section).Mesh);
+    }
+
     private static Gen<Point2D> Centres =>
         from x in NumberGenerators.Between(-5, 5)
         from y in NumberGenerators.Between(-5, 5)
@@ -128,10 +137,10 @@ public static class MeshGenerators
             .Straight(Corner(0, half), Corner(1, half), Corner(2, half), Corner(3, half), "core")
             .Divide(along, along);
         IEnumerable<Mesh> shells = Enumerable.Range(0, 4).Select(quarter => new QuadrilateralPatch(
-                new PatchSide(Corner(quarter, half), Corner(quarter, radius)),
-                new PatchSide(Corner(quarter, radius), Corner(quarter + 1, radius), 0.5 * Math.PI, "rim"),
-                new PatchSide(Corner(quarter + 1, radius), Corner(quarter + 1, half)),
-                new PatchSide(Corner(quarter + 1, half), Corner(quarter, half)),
+                new OutlinePiece(Corner(quarter, half), Corner(quarter, radius)),
+                new OutlinePiece(Corner(quarter, radius), Corner(quarter + 1, radius), 0.5 * Math.PI, "rim"),
+                new OutlinePiece(Corner(quarter + 1, radius), Corner(quarter + 1, half)),
+                new OutlinePiece(Corner(quarter + 1, half), Corner(quarter, half)),
                 "shell")
             .Divide(layers, along));
         return Mesh.Join([core, .. shells]);

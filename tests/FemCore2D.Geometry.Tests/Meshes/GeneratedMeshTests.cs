@@ -3,7 +3,7 @@ using FsCheck.Xunit;
 
 namespace FemCore2D.Geometry.Tests;
 
-[Properties(Arbitrary = [typeof(FieldArbitraries)], MaxTest = 60)]
+[Properties(Arbitrary = [typeof(FieldArbitraries)], MaxTest = 30)]
 public class GeneratedMeshTests
 {
     [Property]

@@ -14,36 +14,36 @@ internal sealed class BoxTree
     private const int StackSize = 64;
 
     private readonly int[] items;
-    private readonly BoundingBox[] nodes;
+    private readonly Box2D[] nodes;
     private readonly int[] levelStarts;
 
-    public BoxTree(ReadOnlySpan<BoundingBox> boxes)
+    public BoxTree(ReadOnlySpan<Box2D> boxes)
     {
         items = new int[boxes.Length];
-        BoundingBox all = BoundingBox.Empty;
+        Box2D all = Box2D.Empty;
         for (int i = 0; i < boxes.Length; i++)
         {
             items[i] = i;
-            all = all.With(boxes[i]);
+            all = all.Union(boxes[i]);
         }
 
         Bounds = all;
         Sort(boxes);
         levelStarts = Levels(boxes.Length);
-        nodes = new BoundingBox[levelStarts[^1]];
-        Array.Fill(nodes, BoundingBox.Empty);
+        nodes = new Box2D[levelStarts[^1]];
+        Array.Fill(nodes, Box2D.Empty);
         for (int i = 0; i < items.Length; i++)
         {
-            ref BoundingBox leaf = ref nodes[i / Fanout];
-            leaf = leaf.With(boxes[items[i]]);
+            ref Box2D leaf = ref nodes[i / Fanout];
+            leaf = leaf.Union(boxes[items[i]]);
         }
 
         for (int level = 1; level < levelStarts.Length - 1; level++)
         {
             for (int below = levelStarts[level - 1]; below < levelStarts[level]; below++)
             {
-                ref BoundingBox node = ref nodes[levelStarts[level] + ((below - levelStarts[level - 1]) / Fanout)];
-                node = node.With(nodes[below]);
+                ref Box2D node = ref nodes[levelStarts[level] + ((below - levelStarts[level - 1]) / Fanout)];
+                node = node.Union(nodes[below]);
             }
         }
     }
@@ -63,15 +63,15 @@ internal sealed class BoxTree
     }
 
     /// <summary>The box around everything.</summary>
-    public BoundingBox Bounds { get; }
+    public Box2D Bounds { get; }
 
     /// <summary>Visits all items whose leaf contains a point.</summary>
     public void VisitAt<TVisitor>(Point2D point, ref TVisitor visitor)
         where TVisitor : struct, IVisitor, allows ref struct =>
-        VisitIn(BoundingBox.Around(point), ref visitor);
+        VisitIn(new Box2D(point, point), ref visitor);
 
     /// <summary>Visits all items whose leaf meets a box.</summary>
-    public void VisitIn<TVisitor>(in BoundingBox target, ref TVisitor visitor)
+    public void VisitIn<TVisitor>(in Box2D target, ref TVisitor visitor)
         where TVisitor : struct, IVisitor, allows ref struct
     {
         if (!Bounds.Meets(target))
@@ -170,14 +170,14 @@ internal sealed class BoxTree
         return [.. starts];
     }
 
-    private void Sort(ReadOnlySpan<BoundingBox> boxes)
+    private void Sort(ReadOnlySpan<Box2D> boxes)
     {
-        double width = Math.Max(Bounds.Right - Bounds.Left, Bounds.Top - Bounds.Bottom);
+        double width = Math.Max(Bounds.Width, Bounds.Height);
         double scale = width > 0 ? (uint.MaxValue - 1.0) / width : 0;
         var keys = new ulong[boxes.Length];
         for (int i = 0; i < boxes.Length; i++)
         {
-            Vector2D offset = boxes[i].Middle - new Point2D(Bounds.Left, Bounds.Bottom);
+            Vector2D offset = boxes[i].Centre - Bounds.Lower;
             keys[i] = Spread((uint)(scale * offset.X)) | (Spread((uint)(scale * offset.Y)) << 1);
         }
 

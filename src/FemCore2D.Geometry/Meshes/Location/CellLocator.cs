@@ -6,8 +6,8 @@ namespace FemCore2D.Geometry;
 /// <remarks>
 /// A cell reaches to its true outline: a point between the chord and the arc of a curved edge belongs to the cell that
 /// bends over it. A cell contains its outline; where several cells contain a point, the lowest-numbered is meant.
-/// Both cells of an edge decide by one and the same computed number on which side of it a point lies, so that no gap
-/// opens between them.
+/// On which side of a straight edge a point lies is decided exactly, and both cells of an arc decide by one and the
+/// same computed number, so that no gap opens between cells.
 /// </remarks>
 public sealed class CellLocator
 {
@@ -19,7 +19,7 @@ public sealed class CellLocator
     {
         ArgumentNullException.ThrowIfNull(mesh);
         Mesh = mesh;
-        var boxes = new BoundingBox[mesh.CellCount];
+        var boxes = new Box2D[mesh.CellCount];
         for (int cell = 0; cell < boxes.Length; cell++)
         {
             boxes[cell] = mesh.BoxOf(cell);

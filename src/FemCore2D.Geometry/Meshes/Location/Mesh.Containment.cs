@@ -6,46 +6,11 @@ public sealed partial class Mesh
     /// <summary>Whether a cell contains a point, its outline of straight and arc edges included.</summary>
     /// <param name="cell">The cell.</param>
     /// <param name="point">The point, in metres.</param>
-    public bool Contains(int cell, Point2D point)
-    {
-        bool insideChords = true;
-        bool beyondChord = false;
-        foreach (int edge in EdgesOf(cell))
-        {
-            double side = SideOfChord(edge, cell, point);
-            double sweep = SweepRadiansOf(edge);
-            if (sweep != 0)
-            {
-                bool bulgesOut = sweep > 0 == (arrays.EdgeCells[2 * edge] == cell);
-                if (bulgesOut)
-                {
-                    beyondChord |= side < 0 && CurveOf(edge).BeyondArc(point) <= 0;
-                }
-                else if (side >= 0 && CurveOf(edge).BeyondArc(point) < 0)
-                {
-                    return false;
-                }
-            }
-
-            insideChords &= side >= 0;
-        }
-
-        return insideChords | beyondChord;
-    }
+    public bool Contains(int cell, Point2D point) =>
+        IsCurved(cell) ? IsWithinArcs(cell, point) : LeastSide(cell, point) >= 0;
 
     /// <summary>Whether a straight cell contains a point off its outline; false for curved cells.</summary>
-    internal bool ContainsInside(int cell, Point2D point)
-    {
-        foreach (int edge in EdgesOf(cell))
-        {
-            if (SweepRadiansOf(edge) != 0 || SideOfChord(edge, cell, point) <= 0)
-            {
-                return false;
-            }
-        }
-
-        return true;
-    }
+    internal bool ContainsInside(int cell, Point2D point) => LeastSide(cell, point) > 0 && !IsCurved(cell);
 
     /// <summary>The distance from a point to the outline of a cell.</summary>
     internal double DistanceToOutline(int cell, Point2D point)
@@ -59,15 +24,59 @@ public sealed partial class Mesh
         return distance;
     }
 
-    /// <summary>
-    /// Positive when a point lies on the side of an edge's chord on which the cell lies; computed in the edge's own
-    /// direction, so that both cells of an edge get exactly opposite numbers.
-    /// </summary>
-    private double SideOfChord(int edge, int cell, Point2D point)
+    /// <summary>Positive where a point lies within all chords of a cell, zero where on one: exact in its sign.</summary>
+    private double LeastSide(int cell, Point2D point)
     {
-        Point2D from = arrays.Vertices[arrays.EdgeVertices[2 * edge]];
-        Point2D to = arrays.Vertices[arrays.EdgeVertices[(2 * edge) + 1]];
-        double left = (from - point).Cross(to - point);
-        return arrays.EdgeCells[2 * edge] == cell ? left : -left;
+        ReadOnlySpan<int> corners = VerticesOf(cell);
+        double least = double.PositiveInfinity;
+        Point2D start = arrays.Vertices[corners[^1]];
+        foreach (int corner in corners)
+        {
+            Point2D end = arrays.Vertices[corner];
+            least = Math.Min(least, Predicates.Orientation(start, end, point));
+            if (!(least >= 0))
+            {
+                break;
+            }
+
+            start = end;
+        }
+
+        return least;
+    }
+
+    /// <summary>
+    /// A curved cell is the area within its chords, with that between chord and arc added where the arc bulges out of
+    /// it and taken away where it bulges in. The chord itself counts with the area it borders from the cell that the
+    /// arc bulges into.
+    /// </summary>
+    private bool IsWithinArcs(int cell, Point2D point)
+    {
+        bool isWithinChords = true;
+        bool isBeyondChord = false;
+        foreach (int edge in EdgesOf(cell))
+        {
+            bool isOnLeft = arrays.EdgeCells[2 * edge] == cell;
+            OutlinePiece curve = CurveOf(edge);
+            double left = Predicates.Orientation(curve.Start, curve.End, point);
+            double side = isOnLeft ? left : -left;
+            isWithinChords &= side >= 0;
+            if (curve.IsStraight)
+            {
+                continue;
+            }
+
+            bool bulgesOut = curve.SweepRadians > 0 == isOnLeft;
+            if (bulgesOut)
+            {
+                isBeyondChord |= side < 0 && curve.BeyondArc(point) <= 0;
+            }
+            else if (side >= 0 && curve.BeyondArc(point) < 0)
+            {
+                return false;
+            }
+        }
+
+        return isWithinChords | isBeyondChord;
     }
 }

@@ -50,13 +50,13 @@ internal sealed class DefinitionReader
             PointNames = [.. definition.Points.Keys],
             PointVertices = [.. definition.Points.Values],
         }.Build();
+        var checks = new CellChecks(mesh);
         for (int cell = 0; cell < mesh.CellCount; cell++)
         {
-            CellChecks.CheckUnfolded(mesh, cell, "List the vertices of a convex cell counterclockwise.");
+            checks.CheckUnfolded(cell, "List the vertices of a convex cell counterclockwise.");
         }
 
-        (Point2D low, Point2D high) = mesh.Bounds;
-        RimChecks.Check(mesh, definition.RelativeTolerance * low.DistanceTo(high), Remedy);
+        RimChecks.Check(mesh, definition.RelativeTolerance * mesh.Bounds.Diagonal, Remedy);
         return mesh;
     }
 

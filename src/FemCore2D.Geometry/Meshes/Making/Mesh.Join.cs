@@ -7,9 +7,8 @@ public sealed partial class Mesh
     /// <remarks>
     /// <para>Regions, boundaries and points of one name become one. Vertices and cells keep their order: first all
     /// triangles, mesh by mesh, then all quadrilaterals; of coinciding vertices the first stays. An edge keeps the
-    /// boundary names it has on either side. A single mesh may be given too, to join it to itself, such as a ring
-    /// that was meshed as a sector of a full turn.</para>
-    /// <para>Meshes that touch nowhere may be joined too.</para>
+    /// boundary names it has on either side.</para>
+    /// <para>Meshes that touch nowhere may be joined too; parts of a single mesh that touch are joined likewise.</para>
     /// </remarks>
     /// <param name="meshes">The meshes, at least one.</param>
     /// <param name="relativeTolerance">

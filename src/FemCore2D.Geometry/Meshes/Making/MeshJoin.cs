@@ -19,7 +19,7 @@ internal sealed class MeshJoin
         this.meshes = meshes;
         firstVertices = new int[meshes.Count];
         List<int> candidates = [];
-        BoundingBox box = BoundingBox.Empty;
+        Box2D box = Box2D.Empty;
         long count = 0;
         for (int i = 0; i < meshes.Count; i++)
         {
@@ -27,8 +27,7 @@ internal sealed class MeshJoin
             CheckRoom(count);
             firstVertices[i] = (int)count;
             count += meshes[i].VertexCount;
-            (Point2D low, Point2D high) = meshes[i].Bounds;
-            box = box.With(low).With(high);
+            box = box.Union(meshes[i].Bounds);
             SortedSet<int> outer = [];
             foreach (int edge in meshes[i].OuterEdges)
             {
@@ -206,8 +205,8 @@ internal sealed class MeshJoin
             return sweep;
         }
 
-        var first = new EdgeCurve(vertices[key.Item1], vertices[key.Item2], known);
-        EdgeCurve second = first with { SweepRadians = inOrder };
+        var first = new OutlinePiece(vertices[key.Item1], vertices[key.Item2], known);
+        OutlinePiece second = first with { SweepRadians = inOrder };
         if (Math.Abs(first.Rise - second.Rise) > tolerance)
         {
             throw new InvalidMeshException(

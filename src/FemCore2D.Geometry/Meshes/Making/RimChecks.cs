@@ -20,10 +20,10 @@ internal static class RimChecks
     {
         CheckTurns(mesh);
         ReadOnlySpan<int> rim = mesh.OuterEdges;
-        var boxes = new BoundingBox[rim.Length];
+        var boxes = new Box2D[rim.Length];
         for (int i = 0; i < boxes.Length; i++)
         {
-            boxes[i] = mesh.CurveOf(rim[i]).Box.Widened(tolerance);
+            boxes[i] = mesh.CurveOf(rim[i]).Bounds.Widened(tolerance);
         }
 
         var tree = new BoxTree(boxes);
@@ -36,14 +36,13 @@ internal static class RimChecks
 
         for (int i = 0; i < rim.Length; i++)
         {
-            var crossings = new Crossings(mesh, rim[i]);
+            var crossings = new Crossings(mesh, rim[i], tolerance);
             tree.VisitIn(boxes[i], ref crossings);
             if (crossings.Found >= 0)
             {
-                Point2D place = mesh.PointOnEdge(rim[i], 0.5);
                 throw new InvalidMeshException(
-                    $"The outer edges {Ends(mesh, rim[i])} and {Ends(mesh, crossings.Found)} cross, so that cells " +
-                    $"overlap around {place}. {remedy}", place);
+                    $"The outer edges {Ends(mesh, rim[i])} and {Ends(mesh, crossings.Found)} cross or touch at " +
+                    $"{crossings.Place}, beside their ends. {remedy}", crossings.Place);
             }
         }
 
@@ -167,16 +166,26 @@ internal static class RimChecks
         }
     }
 
-    private struct Crossings(Mesh mesh, int edge) : BoxTree.IVisitor
+    private struct Crossings(Mesh mesh, int edge, double tolerance) : BoxTree.IVisitor
     {
         public int Found { get; private set; } = -1;
+
+        public Point2D Place { get; private set; }
 
         public void Visit(int item)
         {
             int other = mesh.OuterEdges[item];
-            if (Found < 0 && other != edge && CurveCrossing.Cross(mesh.CurveOf(edge), mesh.CurveOf(other)))
+            if (Found >= 0 || other == edge)
+            {
+                return;
+            }
+
+            Span<Point2D> contacts = stackalloc Point2D[2];
+            PieceForm first = CellChecks.FormOf(mesh.CurveOf(edge));
+            if (PieceContacts.Find(first, CellChecks.FormOf(mesh.CurveOf(other)), tolerance, contacts) > 0)
             {
                 Found = other;
+                Place = contacts[0];
             }
         }
     }

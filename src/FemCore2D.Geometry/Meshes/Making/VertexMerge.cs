@@ -15,10 +15,10 @@ internal static class VertexMerge
             representatives[i] = i;
         }
 
-        var boxes = new BoundingBox[candidates.Length];
+        var boxes = new Box2D[candidates.Length];
         for (int i = 0; i < boxes.Length; i++)
         {
-            boxes[i] = BoundingBox.Around(points[candidates[i]]).Widened(tolerance);
+            boxes[i] = new Box2D(points[candidates[i]], points[candidates[i]]).Widened(tolerance);
         }
 
         var tree = new BoxTree(boxes);

@@ -8,11 +8,11 @@ namespace FemCore2D.Geometry;
 /// <param name="Right">From the second corner to the third.</param>
 /// <param name="Top">From the fourth corner to the third.</param>
 /// <param name="Left">From the first corner to the fourth.</param>
-internal readonly record struct FourSides(EdgeCurve Bottom, EdgeCurve Right, EdgeCurve Top, EdgeCurve Left)
+internal readonly record struct FourSides(OutlinePiece Bottom, OutlinePiece Right, OutlinePiece Top, OutlinePiece Left)
 {
     /// <summary>The sides of a quadrilateral cell.</summary>
     public static FourSides Of(Mesh mesh, int cell) => new(
-        mesh.SideOf(cell, 0), mesh.SideOf(cell, 1), mesh.SideOf(cell, 2).Reversed, mesh.SideOf(cell, 3).Reversed);
+        mesh.SideOf(cell, 0), mesh.SideOf(cell, 1), mesh.SideOf(cell, 2).Reversed(), mesh.SideOf(cell, 3).Reversed());
 
     public Point2D PointAt(double u, double v)
     {
@@ -56,8 +56,8 @@ internal readonly record struct FourSides(EdgeCurve Bottom, EdgeCurve Right, Edg
     /// <param name="second">The side facing it, in the same direction.</param>
     /// <param name="fraction">How far the line has gone from the first to the second.</param>
     /// <param name="chordLength">The length of the line's own chord.</param>
-    public static double SweepBetween(in EdgeCurve first, in EdgeCurve second, double fraction, double chordLength) =>
+    public static double SweepBetween(in OutlinePiece first, in OutlinePiece second, double fraction, double chordLength) =>
         first.IsStraight && second.IsStraight
             ? 0
-            : EdgeCurve.SweepOf(((1 - fraction) * first.Rise) + (fraction * second.Rise), chordLength);
+            : OutlinePiece.SweepOf(((1 - fraction) * first.Rise) + (fraction * second.Rise), chordLength);
 }

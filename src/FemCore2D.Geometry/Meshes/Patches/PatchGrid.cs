@@ -50,7 +50,7 @@ internal sealed class PatchGrid(FourSides sides, string?[] boundaries, double[] 
 
     /// <summary>Gives the edges along all lines of one direction their arcs, and the two outer lines their names.</summary>
     private void MarkLines(
-        Point2D[] vertices, in EdgeCurve first, in EdgeCurve last, double[] steps, double[] lines,
+        Point2D[] vertices, in OutlinePiece first, in OutlinePiece last, double[] steps, double[] lines,
         Func<int, int, int> vertex, int firstSet, int lastSet)
     {
         bool isStraight = first.IsStraight && last.IsStraight;

@@ -15,7 +15,7 @@ public sealed class QuadrilateralPatch
 
     private const double RelativeTolerance = 1e-9;
 
-    private readonly PatchSide[] given;
+    private readonly OutlinePiece[] given;
 
     /// <summary>Creates the patch from its sides, counterclockwise, each beginning where the one before it ends.</summary>
     /// <param name="first">The first side.</param>
@@ -26,13 +26,13 @@ public sealed class QuadrilateralPatch
     /// <exception cref="InvalidMeshException">
     /// A side has no length, sweeps a full turn or more, is not finite, or does not meet the next.
     /// </exception>
-    public QuadrilateralPatch(PatchSide first, PatchSide second, PatchSide third, PatchSide fourth, string region)
+    public QuadrilateralPatch(OutlinePiece first, OutlinePiece second, OutlinePiece third, OutlinePiece fourth, string region)
     {
         ArgumentException.ThrowIfNullOrWhiteSpace(region);
         Region = region;
         given = [first, second, third, fourth];
-        BoundingBox box = BoundingBox.Empty;
-        foreach (PatchSide side in given)
+        Box2D box = Box2D.Empty;
+        foreach (OutlinePiece side in given)
         {
             box = box.With(side.Start).With(side.End);
         }
@@ -40,13 +40,13 @@ public sealed class QuadrilateralPatch
         double tolerance = RelativeTolerance * box.Diagonal;
         for (int i = 0; i < given.Length; i++)
         {
-            PatchSide next = given[(i + 1) % given.Length];
+            OutlinePiece next = given[(i + 1) % given.Length];
             CheckSide(i + 1, given[i], next, tolerance);
             given[i] = given[i] with { End = next.Start };
         }
 
         Sides = new FourSides(
-            given[0].Curve, given[1].Curve, given[2].Curve.Reversed, given[3].Curve.Reversed);
+            given[0], given[1], given[2].Reversed(), given[3].Reversed());
     }
 
     /// <summary>The name of the region that the patch fills.</summary>
@@ -63,8 +63,8 @@ public sealed class QuadrilateralPatch
     /// <exception cref="InvalidMeshException">Two corners coincide or one is not finite.</exception>
     public static QuadrilateralPatch Straight(
         Point2D first, Point2D second, Point2D third, Point2D fourth, string region) => new(
-        new PatchSide(first, second), new PatchSide(second, third),
-        new PatchSide(third, fourth), new PatchSide(fourth, first), region);
+        new OutlinePiece(first, second), new OutlinePiece(second, third),
+        new OutlinePiece(third, fourth), new OutlinePiece(fourth, first), region);
 
     /// <summary>The patch that fills a sector of a ring.</summary>
     /// <remarks>Its first direction goes outwards along the radius, its second around the centre.</remarks>
@@ -72,7 +72,7 @@ public sealed class QuadrilateralPatch
     /// <param name="innerRadius">The inner radius, in metres, positive.</param>
     /// <param name="outerRadius">The outer radius, in metres.</param>
     /// <param name="startRadians">The direction in which the sector begins.</param>
-    /// <param name="sweepRadians">The angle of the sector, counterclockwise; at most a full turn.</param>
+    /// <param name="sweepRadians">The angle of the sector, counterclockwise; less than a full turn, so that a whole ring takes two.</param>
     /// <param name="region">The name of the region that the patch fills.</param>
     /// <param name="inner">The name of the boundary along the inner arc, or none.</param>
     /// <param name="outer">The name of the boundary along the outer arc, or none.</param>
@@ -90,12 +90,16 @@ public sealed class QuadrilateralPatch
                 $"{sweepRadians:G9}. Give an inner radius above zero, a larger outer one and a positive angle.", centre);
         }
 
-        var outerArc = PatchSide.Arc(centre, outerRadius, startRadians, sweepRadians, outer);
-        var innerArc = PatchSide.Arc(centre, innerRadius, startRadians + sweepRadians, -sweepRadians, inner);
+        Vector2D toStart = Vector2D.AtAngle(startRadians);
+        Vector2D toEnd = Vector2D.AtAngle(startRadians + sweepRadians);
+        var outerArc = new OutlinePiece(
+            centre + (outerRadius * toStart), centre + (outerRadius * toEnd), sweepRadians, outer);
+        var innerArc = new OutlinePiece(
+            centre + (innerRadius * toEnd), centre + (innerRadius * toStart), -sweepRadians, inner);
         return new QuadrilateralPatch(
-            new PatchSide(innerArc.End, outerArc.Start, 0, start),
+            new OutlinePiece(innerArc.End, outerArc.Start, 0, start),
             outerArc,
-            new PatchSide(outerArc.End, innerArc.Start, 0, end),
+            new OutlinePiece(outerArc.End, innerArc.Start, 0, end),
             innerArc,
             region);
     }
@@ -130,17 +134,18 @@ public sealed class QuadrilateralPatch
         double[] u = (alongGrading ?? Grading.Even).Fractions(along);
         double[] v = (acrossGrading ?? Grading.Even).Fractions(across);
         Mesh mesh = new PatchGrid(Sides, [.. given.Select(side => side.Boundary)], u, v).ToMesh(Region);
+        var checks = new CellChecks(mesh);
         for (int cell = 0; cell < mesh.CellCount; cell++)
         {
-            CellChecks.CheckUnfolded(
-                mesh, cell, $"The patch of region '{Region}' is folded there: list its sides counterclockwise, bend them " +
+            checks.CheckUnfolded(
+                cell, $"The patch of region '{Region}' is folded there: list its sides counterclockwise, bend them " +
                 "less, or divide it into several patches.");
         }
 
         return mesh;
     }
 
-    private static void CheckSide(int number, PatchSide side, PatchSide next, double tolerance)
+    private static void CheckSide(int number, OutlinePiece side, OutlinePiece next, double tolerance)
     {
         if (!side.Start.IsFinite || !side.End.IsFinite || !(Math.Abs(side.SweepRadians) < 2 * Math.PI))
         {

@@ -3,12 +3,12 @@ namespace FemCore2D.Geometry;
 /// <content>Lengths, areas and points of edges and cells, arcs included.</content>
 public sealed partial class Mesh
 {
-    /// <summary>The corners of the smallest box around the mesh with sides along the axes, arcs included.</summary>
-    public (Point2D Low, Point2D High) Bounds
+    /// <summary>The smallest box around the mesh, arcs included.</summary>
+    public Box2D Bounds
     {
         get
         {
-            BoundingBox box = BoundingBox.Empty;
+            Box2D box = Box2D.Empty;
             foreach (Point2D vertex in Vertices)
             {
                 box = box.With(vertex);
@@ -16,10 +16,10 @@ public sealed partial class Mesh
 
             for (int edge = 0; edge < arrays.EdgeSweeps.Length; edge++)
             {
-                box = arrays.EdgeSweeps[edge] != 0 ? box.With(CurveOf(edge).Box) : box;
+                box = arrays.EdgeSweeps[edge] != 0 ? box.Union(CurveOf(edge).Bounds) : box;
             }
 
-            return (new Point2D(box.Left, box.Bottom), new Point2D(box.Right, box.Top));
+            return box;
         }
     }
 
@@ -33,7 +33,7 @@ public sealed partial class Mesh
     /// </summary>
     /// <param name="edge">The edge.</param>
     /// <param name="fraction">From 0 at its first vertex to 1 at its second.</param>
-    public Vector2D TangentOnEdge(int edge, double fraction) => CurveOf(edge).TangentAt(fraction);
+    public Vector2D TangentOnEdge(int edge, double fraction) => LengthOf(edge) * CurveOf(edge).TangentAt(fraction);
 
     /// <summary>The length of an edge, along its arc if it has one, in metres.</summary>
     public double LengthOf(int edge) => CurveOf(edge).Length;
@@ -59,7 +59,7 @@ public sealed partial class Mesh
             {
                 if (arrays.EdgeSweeps[edge] != 0)
                 {
-                    double beyond = CurveOf(edge).AreaBeyondChord;
+                    double beyond = CurveOf(edge).SegmentArea;
                     area += arrays.EdgeCells[2 * edge] == cell ? beyond : -beyond;
                 }
             }
@@ -112,23 +112,23 @@ public sealed partial class Mesh
     }
 
     /// <summary>The line of an edge in its own direction.</summary>
-    internal EdgeCurve CurveOf(int edge) => new(
+    internal OutlinePiece CurveOf(int edge) => new(
         arrays.Vertices[arrays.EdgeVertices[2 * edge]],
         arrays.Vertices[arrays.EdgeVertices[(2 * edge) + 1]],
         SweepRadiansOf(edge));
 
     /// <summary>The line of a local edge of a cell, counterclockwise around the cell.</summary>
-    internal EdgeCurve SideOf(int cell, int localEdge)
+    internal OutlinePiece SideOf(int cell, int localEdge)
     {
         int edge = EdgesOf(cell)[localEdge];
-        EdgeCurve curve = CurveOf(edge);
-        return arrays.EdgeCells[2 * edge] == cell ? curve : curve.Reversed;
+        OutlinePiece curve = CurveOf(edge);
+        return arrays.EdgeCells[2 * edge] == cell ? curve : curve.Reversed();
     }
 
     /// <summary>The smallest box around a cell.</summary>
-    internal BoundingBox BoxOf(int cell)
+    internal Box2D BoxOf(int cell)
     {
-        BoundingBox box = BoundingBox.Empty;
+        Box2D box = Box2D.Empty;
         foreach (int vertex in VerticesOf(cell))
         {
             box = box.With(arrays.Vertices[vertex]);
@@ -138,8 +138,14 @@ public sealed partial class Mesh
         {
             foreach (int edge in EdgesOf(cell))
             {
-                box = arrays.EdgeSweeps[edge] != 0 ? box.With(CurveOf(edge).Box) : box;
+                box = arrays.EdgeSweeps[edge] != 0 ? box.Union(CurveOf(edge).Bounds) : box;
             }
+
+            // The extreme points of arcs are rounded.
+            double largest = Math.Max(
+                Math.Max(Math.Abs(box.Lower.X), Math.Abs(box.Upper.X)),
+                Math.Max(Math.Abs(box.Lower.Y), Math.Abs(box.Upper.Y)));
+            return box.Widened(1e-15 * largest);
         }
 
         return box;

@@ -11,12 +11,13 @@ internal static class CurvedParts
             return;
         }
 
+        var checks = new CellChecks(refined);
         for (int cell = 0; cell < parents.Length; cell++)
         {
             if (mesh.IsCurved(parents[cell]))
             {
-                CellChecks.CheckUnfolded(
-                    refined, cell,
+                checks.CheckUnfolded(
+                    cell,
                     $"It is a part of cell {parents[cell]}, whose arc sweeps too far for its size to be divided. " +
                     "Mesh that arc by more edges before refining.");
             }

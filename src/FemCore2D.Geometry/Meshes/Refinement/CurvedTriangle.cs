@@ -6,7 +6,7 @@ namespace FemCore2D.Geometry;
 /// do under the quadratic map of the triangle, which moves a point of barycentric coordinates l by
 /// <c>4 l_i l_j</c> times the rise of each side from i to j.
 /// </remarks>
-internal readonly record struct CurvedTriangle(EdgeCurve AB, EdgeCurve BC, EdgeCurve CA)
+internal readonly record struct CurvedTriangle(OutlinePiece AB, OutlinePiece BC, OutlinePiece CA)
 {
     /// <summary>A side that rises by no more than this share of the triangle's height over it bends but little.</summary>
     /// <remarks>Halving another side halves the height; the tangent at the side's ends then stays within half the angle.</remarks>
@@ -19,17 +19,17 @@ internal readonly record struct CurvedTriangle(EdgeCurve AB, EdgeCurve BC, EdgeC
 
     /// <summary>The sweep of the line from A to the middle of the side from B to C.</summary>
     public double MedianSweep => IsStronglyBent
-        ? EdgeCurve.Bent(
+        ? OutlinePiece.Bent(
             AB.Start, BC.PointAt(0.5), (0.5 * (AB.RiseVector + CA.RiseVector)) - (0.25 * BC.RiseVector)).SweepRadians
         : 0;
 
     /// <summary>The sweep of the line from the middle of AB to the middle of CA, which runs along BC.</summary>
     public double MiddleLineSweep => IsStronglyBent
-        ? EdgeCurve.Bent(AB.PointAt(0.5), CA.PointAt(0.5), 0.25 * BC.RiseVector).SweepRadians
+        ? OutlinePiece.Bent(AB.PointAt(0.5), CA.PointAt(0.5), 0.25 * BC.RiseVector).SweepRadians
         : 0;
 
     /// <summary>The same triangle begun at B.</summary>
     public CurvedTriangle Turned => new(BC, CA, AB);
 
-    private static double RiseTimesChord(in EdgeCurve side) => Math.Abs(side.Rise) * side.Chord.Length;
+    private static double RiseTimesChord(in OutlinePiece side) => Math.Abs(side.Rise) * side.Chord.Length;
 }

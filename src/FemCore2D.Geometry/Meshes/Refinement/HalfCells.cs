@@ -33,12 +33,12 @@ internal sealed class HalfCells
     /// The diagonal of a quadrilateral: straight in a cell that bends but little, and bent as by the transfinite map
     /// of its sides in any other.
     /// </summary>
-    public EdgeCurve DiagonalCurve(int quadrilateral)
+    public OutlinePiece DiagonalCurve(int quadrilateral)
     {
         HalfCell half = this[HalvesOf(quadrilateral).First];
         Point2D start = mesh.Vertices[half.C];
         Point2D end = mesh.Vertices[half.A];
-        var straight = new EdgeCurve(start, end, 0);
+        var straight = new OutlinePiece(start, end, 0);
         if (!mesh.IsCurved(quadrilateral))
         {
             return straight;
@@ -50,11 +50,11 @@ internal sealed class HalfCells
         {
             isStronglyBent |= new CurvedTriangle(
                 mesh.SideOf(quadrilateral, i), mesh.SideOf(quadrilateral, (i + 1) % 4),
-                i == first ? straight : straight.Reversed).IsStronglyBent;
+                i == first ? straight : straight.Reversed()).IsStronglyBent;
         }
 
         return isStronglyBent
-            ? EdgeCurve.Bent(
+            ? OutlinePiece.Bent(
                 start, end, FourSides.Of(mesh, quadrilateral).PointAt(0.5, 0.5) - straight.PointAt(0.5))
             : straight;
     }

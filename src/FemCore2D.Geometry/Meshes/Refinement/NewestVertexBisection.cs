@@ -221,17 +221,17 @@ internal sealed class NewestVertexBisection
     private CurvedTriangle CurveOf(in HalfCell half) => new(
         Side(half.A, half.B, half.LineAB), Side(half.B, half.C, half.LineBC), Side(half.C, half.A, half.LineCA));
 
-    private EdgeCurve Side(int start, int end, int line)
+    private OutlinePiece Side(int start, int end, int line)
     {
         if (!mesh.HasArcs)
         {
-            return new EdgeCurve(vertices[start], vertices[end], 0);
+            return new OutlinePiece(vertices[start], vertices[end], 0);
         }
 
-        EdgeCurve curve = line < mesh.EdgeCount
+        OutlinePiece curve = line < mesh.EdgeCount
             ? mesh.CurveOf(line)
             : halves.DiagonalCurve(mesh.TriangleCount + line - mesh.EdgeCount);
-        return curve.Start == vertices[start] ? curve : curve.Reversed;
+        return curve.Start == vertices[start] ? curve : curve.Reversed();
     }
 
     /// <summary>Cuts a triangle from its first vertex, the newest, to the line that faces it, and the parts likewise.</summary>
@@ -247,7 +247,7 @@ internal sealed class NewestVertexBisection
 
         Point2D place = vertices[middle];
         double half = 0.5 * curves.BC.SweepRadians;
-        var median = new EdgeCurve(vertices[triangle.A], place, curves.MedianSweep);
+        var median = new OutlinePiece(vertices[triangle.A], place, curves.MedianSweep);
         if (!median.IsStraight)
         {
             medians.Add(new MarkedEdge(triangle.A, middle, median.SweepRadians, -1));
@@ -255,10 +255,10 @@ internal sealed class NewestVertexBisection
 
         Bisect(
             new HalfCell(middle, triangle.A, triangle.B, New, triangle.LineAB, New),
-            new CurvedTriangle(median.Reversed, curves.AB, new EdgeCurve(curves.BC.Start, place, half)));
+            new CurvedTriangle(median.Reversed(), curves.AB, new OutlinePiece(curves.BC.Start, place, half)));
         Bisect(
             new HalfCell(middle, triangle.C, triangle.A, New, triangle.LineCA, New),
-            new CurvedTriangle(new EdgeCurve(place, curves.BC.End, half), curves.CA, median));
+            new CurvedTriangle(new OutlinePiece(place, curves.BC.End, half), curves.CA, median));
     }
 
     private void Add(in HalfCell triangle, int bisectionLine)

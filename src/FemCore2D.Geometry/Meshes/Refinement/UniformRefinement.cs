@@ -134,7 +134,7 @@ internal sealed class UniformRefinement
     }
 
     /// <summary>Lets a new edge bend as much as the mean of the two halves of sides on either hand.</summary>
-    private void Bend(int start, int end, in EdgeCurve first, in EdgeCurve second) => Mark(
+    private void Bend(int start, int end, in OutlinePiece first, in OutlinePiece second) => Mark(
         start, end, FourSides.SweepBetween(first, second, 0.5, vertices[start].DistanceTo(vertices[end])));
 
     private void Mark(int start, int end, double sweep)
