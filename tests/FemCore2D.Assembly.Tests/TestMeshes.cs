@@ -12,16 +12,16 @@ internal static class TestMeshes
     public static Mesh Square(int divisions, bool triangles)
     {
         Mesh left = new QuadrilateralPatch(
-            new PatchSide(new Point2D(0, 0), new Point2D(0.5, 0), 0, "bottom"),
-            new PatchSide(new Point2D(0.5, 0), new Point2D(0.5, 1), 0, "middle"),
-            new PatchSide(new Point2D(0.5, 1), new Point2D(0, 1), 0, "top"),
-            new PatchSide(new Point2D(0, 1), new Point2D(0, 0), 0, "left"),
+            new OutlinePiece(new Point2D(0, 0), new Point2D(0.5, 0), 0, "bottom"),
+            new OutlinePiece(new Point2D(0.5, 0), new Point2D(0.5, 1), 0, "middle"),
+            new OutlinePiece(new Point2D(0.5, 1), new Point2D(0, 1), 0, "top"),
+            new OutlinePiece(new Point2D(0, 1), new Point2D(0, 0), 0, "left"),
             "a").Divide(divisions, 2 * divisions);
         Mesh right = new QuadrilateralPatch(
-            new PatchSide(new Point2D(0.5, 0), new Point2D(1, 0), 0, "bottom"),
-            new PatchSide(new Point2D(1, 0), new Point2D(1, 1), 0, "right"),
-            new PatchSide(new Point2D(1, 1), new Point2D(0.5, 1), 0, "top"),
-            new PatchSide(new Point2D(0.5, 1), new Point2D(0.5, 0), 0, "middle"),
+            new OutlinePiece(new Point2D(0.5, 0), new Point2D(1, 0), 0, "bottom"),
+            new OutlinePiece(new Point2D(1, 0), new Point2D(1, 1), 0, "right"),
+            new OutlinePiece(new Point2D(1, 1), new Point2D(0.5, 1), 0, "top"),
+            new OutlinePiece(new Point2D(0.5, 1), new Point2D(0.5, 0), 0, "middle"),
             "b").Divide(divisions, 2 * divisions);
         return Cut(Mesh.Join([left, right]), triangles);
     }
@@ -29,10 +29,10 @@ internal static class TestMeshes
     /// <summary>A quadrilateral that is no parallelogram, with the boundary <c>rim</c> all around.</summary>
     public static Mesh Trapezium(int divisions, bool triangles) => Cut(
         new QuadrilateralPatch(
-            new PatchSide(new Point2D(0, 0), new Point2D(1.3, 0.1), 0, "rim"),
-            new PatchSide(new Point2D(1.3, 0.1), new Point2D(1, 1.1), 0, "rim"),
-            new PatchSide(new Point2D(1, 1.1), new Point2D(-0.1, 0.7), 0, "rim"),
-            new PatchSide(new Point2D(-0.1, 0.7), new Point2D(0, 0), 0, "rim"),
+            new OutlinePiece(new Point2D(0, 0), new Point2D(1.3, 0.1), 0, "rim"),
+            new OutlinePiece(new Point2D(1.3, 0.1), new Point2D(1, 1.1), 0, "rim"),
+            new OutlinePiece(new Point2D(1, 1.1), new Point2D(-0.1, 0.7), 0, "rim"),
+            new OutlinePiece(new Point2D(-0.1, 0.7), new Point2D(0, 0), 0, "rim"),
             "all").Divide(divisions, divisions),
         triangles);
 
@@ -62,10 +62,10 @@ internal static class TestMeshes
         Mesh core = QuadrilateralPatch
             .Straight(Corner(0, 0.5), Corner(1, 0.5), Corner(2, 0.5), Corner(3, 0.5), "core").Divide(along, along);
         IEnumerable<Mesh> shells = Enumerable.Range(0, 4).Select(quarter => new QuadrilateralPatch(
-                new PatchSide(Corner(quarter, 0.5), Corner(quarter, 1)),
-                new PatchSide(Corner(quarter, 1), Corner(quarter + 1, 1), 0.5 * Math.PI, "rim"),
-                new PatchSide(Corner(quarter + 1, 1), Corner(quarter + 1, 0.5)),
-                new PatchSide(Corner(quarter + 1, 0.5), Corner(quarter, 0.5)),
+                new OutlinePiece(Corner(quarter, 0.5), Corner(quarter, 1)),
+                new OutlinePiece(Corner(quarter, 1), Corner(quarter + 1, 1), 0.5 * Math.PI, "rim"),
+                new OutlinePiece(Corner(quarter + 1, 1), Corner(quarter + 1, 0.5)),
+                new OutlinePiece(Corner(quarter + 1, 0.5), Corner(quarter, 0.5)),
                 "shell")
             .Divide(layers, along));
         return Cut(Mesh.Join([core, .. shells]), triangles);
