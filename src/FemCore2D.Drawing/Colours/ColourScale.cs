@@ -8,8 +8,8 @@ namespace FemCore2D.Drawing;
 /// </summary>
 /// <remarks>
 /// The paths are drawn in the perceptual space of Ottosson (2020): lightness is an exact straight line, hue and chroma
-/// change slowly beside it. Violet stands against lichen, and blue against ochre, because these pairs lie along the
-/// axis of colour that the common kinds of colour blindness leave intact (Vienot, Brettel and Mollon 1999).
+/// change slowly beside it. Where two sides stand against each other, violets and blues face ochres and browns: these
+/// stay apart under each kind of colour blindness as modelled by Machado, Oliveira and Fernandes (2009).
 /// </remarks>
 public sealed class ColourScale
 {
@@ -36,7 +36,7 @@ public sealed class ColourScale
     /// <summary>From the pale rose of a shell by ochre and marsh green to petrol.</summary>
     public static ColourScale Samphire { get; } = new("Samphire", ColourScaleKind.Sequential, ScalePaths.Samphire);
 
-    /// <summary>Two sides of a middle: heather violet below, lichen olive above, pale sand between.</summary>
+    /// <summary>Two sides of a middle: heather violet below, peat brown above, pale sand between.</summary>
     public static ColourScale EbbFlood { get; } = new("EbbFlood", ColourScaleKind.Diverging, ScalePaths.EbbFlood);
 
     /// <summary>Once around: from foam by blue to slate, and by ochre back to foam.</summary>

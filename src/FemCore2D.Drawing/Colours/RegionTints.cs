@@ -13,7 +13,7 @@ public static class RegionTints
     [
         Tint(0.93, 0.035, 80), Tint(0.82, 0.065, 235), Tint(0.90, 0.055, 140), Tint(0.79, 0.075, 55),
         Tint(0.91, 0.035, 300), Tint(0.83, 0.050, 190), Tint(0.94, 0.070, 105), Tint(0.77, 0.070, 330),
-        Tint(0.92, 0.025, 220), Tint(0.80, 0.070, 120), Tint(0.90, 0.050, 30), Tint(0.75, 0.060, 275),
+        Tint(0.92, 0.025, 220), Tint(0.80, 0.070, 120), Tint(0.90, 0.050, 30), Tint(0.77, 0.060, 275),
     ];
 
     /// <summary>The tint of the region with a number; from the thirteenth on they return, darker and turned in hue.</summary>

@@ -20,8 +20,8 @@ internal static class ScalePaths
     {
         double side = Math.Abs((2 * t) - 1);
         double hue = t < 0.5
-            ? Between(side, (0, 265), (0.5, 285), (1, 305))
-            : Between(side, (0, 110), (0.5, 108), (1, 90));
+            ? Between(side, (0, 255), (0.5, 275), (1, 298))
+            : Between(side, (0, 92), (0.5, 82), (1, 55));
         double chroma = Between(side, (0, 0.006), (0.5, 0.095), (1, 0.12));
         return Oklab.FromPolar(Line(0.97, Darkest, side), chroma, hue);
     }

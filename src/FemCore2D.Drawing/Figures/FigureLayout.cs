@@ -10,14 +10,15 @@ internal sealed class FigureLayout
     private const float TitleBand = 20;
 
     private readonly string title;
-    private readonly List<PanelLayout> panels;
 
     private FigureLayout(string title, List<PanelLayout> panels, SKSize size)
     {
         this.title = title;
-        this.panels = panels;
+        Panels = panels;
         Size = size;
     }
+
+    public IReadOnlyList<PanelLayout> Panels { get; }
 
     /// <summary>The size of the page in points.</summary>
     public SKSize Size { get; }
@@ -59,7 +60,7 @@ internal sealed class FigureLayout
     {
         var style = new TextStyle(Ink.TitleSize, Ink.Text, IsBold: true);
         surface.Write(title, Margin, Margin + 6, Anchor.Start, style);
-        foreach (PanelLayout panel in panels)
+        foreach (PanelLayout panel in Panels)
             panel.Draw(surface);
     }
 }

@@ -14,7 +14,6 @@ internal sealed class PanelLayout
     private const float FlatAspect = 0.42f;
 
     private readonly Panel panel;
-    private readonly PlotFrame frame;
     private readonly AxisPair? axes;
     private readonly Legend legend;
     private readonly bool hasFlatBars;
@@ -22,12 +21,15 @@ internal sealed class PanelLayout
     private PanelLayout(Panel panel, PlotFrame frame, AxisPair? axes, Legend legend, bool hasFlatBars, float height)
     {
         this.panel = panel;
-        this.frame = frame;
+        Frame = frame;
         this.axes = axes;
         this.legend = legend;
         this.hasFlatBars = hasFlatBars;
         Height = height;
     }
+
+    /// <summary>Where the plane lies on the page.</summary>
+    public PlotFrame Frame { get; }
 
     /// <summary>The height that the panel takes, in points.</summary>
     public float Height { get; }
@@ -36,12 +38,14 @@ internal sealed class PanelLayout
     {
         Box2D view = panel.Window();
         IReadOnlyList<LegendItem> items = [];
+        PlotFrame? known = null;
 
         // What the legend must hold depends on the size of the plot, which depends on the legend: it soon settles.
         for (int round = 0; ; round++)
         {
-            PanelLayout layout = Place(panel, view, items, x, y, width, height, pixelsPerPoint);
-            List<LegendItem> wanted = [.. panel.Layers.SelectMany(layer => layer.LegendIn(layout.frame))];
+            PanelLayout layout = Place(panel, view, items, x, y, width, height, pixelsPerPoint, known);
+            known = layout.Frame;
+            List<LegendItem> wanted = [.. panel.Layers.SelectMany(layer => layer.LegendIn(layout.Frame))];
             if (round == 2 || wanted.All(item => items.Any(old => old.Text == item.Text)))
                 return layout;
             items = wanted;
@@ -53,35 +57,35 @@ internal sealed class PanelLayout
         if (panel.Title.Length > 0)
         {
             var style = new TextStyle(Ink.PanelTitleSize, Ink.Text, IsBold: true);
-            surface.Write(panel.Title, frame.Area.Left, frame.Area.Top - 9, Anchor.Start, style);
+            surface.Write(panel.Title, Frame.Area.Left, Frame.Area.Top - 9, Anchor.Start, style);
         }
 
-        frame.Taken.Clear();
+        Frame.Taken.Clear();
         surface.Canvas.Save();
-        surface.Canvas.ClipRect(frame.Area);
+        surface.Canvas.ClipRect(Frame.Area);
         foreach (Layer layer in panel.Layers)
-            layer.Draw(surface, frame);
+            layer.Draw(surface, Frame);
         surface.Canvas.Restore();
-        axes?.Draw(surface, frame.Area);
+        axes?.Draw(surface, Frame.Area);
 
         float below = axes is null ? 0 : AxisPair.Below;
         float offset = 0;
         foreach (Layer layer in panel.Layers.Where(layer => layer.HasScaleBar))
         {
-            BandScale? scale = layer.ScaleIn(frame);
+            BandScale? scale = layer.ScaleIn(Frame);
             if (hasFlatBars)
             {
-                ScaleBar.DrawFlat(surface, scale, frame.Area, frame.Area.Bottom + below + offset + 8);
+                ScaleBar.DrawFlat(surface, scale, Frame.Area, Frame.Area.Bottom + below + offset + 8);
                 offset += FlatBarRoom;
             }
             else
             {
-                ScaleBar.DrawUpright(surface, scale, frame.Area, frame.Area.Right + offset + 14);
+                ScaleBar.DrawUpright(surface, scale, Frame.Area, Frame.Area.Right + offset + 14);
                 offset += SideBarRoom;
             }
         }
 
-        legend.Draw(surface, frame.Area.Left, frame.Area.Bottom + below + (hasFlatBars ? offset : 0) + 8);
+        legend.Draw(surface, Frame.Area.Left, Frame.Area.Bottom + below + (hasFlatBars ? offset : 0) + 8);
     }
 
     private static PanelLayout Place(
@@ -92,7 +96,8 @@ internal sealed class PanelLayout
         float y,
         float width,
         float height,
-        double pixelsPerPoint)
+        double pixelsPerPoint,
+        PlotFrame? known)
     {
         int bars = panel.Layers.Count(layer => layer.HasScaleBar);
         double aspect = view.Height / view.Width;
@@ -119,7 +124,7 @@ internal sealed class PanelLayout
         // What a narrow plot leaves free goes to both sides.
         float start = x + left + ((roomWide - plotWide) / 2);
         var area = SKRect.Create(start, y + top, plotWide, plotHigh);
-        var frame = new PlotFrame(view, area, pixelsPerPoint);
+        PlotFrame frame = known?.Area == area ? known : new PlotFrame(view, area, pixelsPerPoint);
         return new PanelLayout(panel, frame, axes?.For(frame), legend, isFlat, top + plotHigh + below + legend.Height);
     }
 }

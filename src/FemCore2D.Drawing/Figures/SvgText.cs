@@ -12,10 +12,7 @@ internal static class SvgText
     /// <summary>Rewrites a file as the canvas made it.</summary>
     public static string Tidy(string svg, SKSize size)
     {
-        // Several pictures may share one page, where equal names of clips would be taken for each other.
-        string mark = Mark(svg);
-        svg = svg.Replace("id=\"cl_", $"id=\"{mark}-", StringComparison.Ordinal)
-            .Replace("url(#cl_", $"url(#{mark}-", StringComparison.Ordinal);
+        svg = Rename(svg);
         var text = new StringBuilder(svg.Length);
         int done = svg.IndexOf("<svg ", StringComparison.Ordinal) + 5;
         text.Append(svg, 0, done);
@@ -31,6 +28,30 @@ internal static class SvgText
         }
 
         return text.Append(svg, done, svg.Length - done).ToString();
+    }
+
+    /// <summary>
+    /// Gives clips and images names that depend on the contents alone: several pictures may share one page, where equal
+    /// names would be taken for each other, and the canvas numbers them on through all its files.
+    /// </summary>
+    private static string Rename(string svg)
+    {
+        const string start = " id=\"";
+        int count = 0;
+        for (int at = svg.IndexOf(start, StringComparison.Ordinal); at >= 0; at = svg.IndexOf(start, at + 1, StringComparison.Ordinal))
+        {
+            int from = at + start.Length;
+            string old = svg[from..svg.IndexOf('"', from)];
+            string plain = string.Create(CultureInfo.InvariantCulture, $"@part{count++}@");
+            svg = svg.Replace($"\"{old}\"", $"\"{plain}\"", StringComparison.Ordinal)
+                .Replace($"#{old})", $"#{plain})", StringComparison.Ordinal)
+                .Replace($"\"#{old}\"", $"\"#{plain}\"", StringComparison.Ordinal);
+        }
+
+        string mark = Mark(svg);
+        for (int i = 0; i < count; i++)
+            svg = svg.Replace($"@part{i}@", $"{mark}-{i}", StringComparison.Ordinal);
+        return svg;
     }
 
     /// <summary>Copies a shape with its numbers rounded to a hundredth of a point.</summary>

@@ -96,15 +96,21 @@ public sealed record RegionLayer : Layer
     private static Colour TintOf(Mesh mesh, int region, ImmutableDictionary<string, Colour> tints) =>
         tints.TryGetValue(mesh.RegionNames[region], out Colour own) ? own : RegionTints.Of(region);
 
-    private IEnumerable<(int Region, SKPoint? Place)> Places(PlotFrame frame)
+    private List<(int Region, SKPoint? Place)> Places(PlotFrame frame)
     {
+        if (frame.NamePlaces.TryGetValue(this, out List<(int Region, SKPoint? Place)>? known))
+            return known;
         var map = new RegionMap(Mesh, frame);
+        var places = new List<(int Region, SKPoint? Place)>();
         for (int region = 0; region < Mesh.RegionNames.Length; region++)
         {
             if (!map.Sees(region))
                 continue;
             float width = Surface.WidthOf(Mesh.RegionNames[region], Ink.NameSize) + 4;
-            yield return (region, map.PlaceFor(region, width, Ink.NameSize + 3));
+            places.Add((region, map.PlaceFor(region, width, Ink.NameSize + 3)));
         }
+
+        frame.NamePlaces.Add(this, places);
+        return places;
     }
 }

@@ -33,6 +33,9 @@ internal sealed class PlotFrame
     /// <summary>Boxes on the page that texts already take.</summary>
     public List<SKRect> Taken { get; } = [];
 
+    /// <summary>Where the names of regions stand, by layer; null for those that fit nowhere.</summary>
+    public Dictionary<RegionLayer, List<(int Region, SKPoint? Place)>> NamePlaces { get; } = [];
+
     public SKPoint ToPage(Point2D place) => new(
         (float)(Area.Left + ((place.X - View.Lower.X) * PointsPerMetre)),
         (float)(Area.Bottom - ((place.Y - View.Lower.Y) * PointsPerMetre)));

@@ -7,6 +7,7 @@ internal static class EdgeDivision
 {
     private const double TargetPixels = 6;
     private const double LargestSagitta = 0.12;
+    private const int MostSteps = 32;
 
     /// <summary>Chooses the steps, a power of two for each edge.</summary>
     /// <param name="mesh">The mesh.</param>
@@ -15,7 +16,6 @@ internal static class EdgeDivision
     public static int[] Choose(Mesh mesh, int degree, double pixelsPerMetre)
     {
         int[] steps = new int[mesh.EdgeCount];
-        int limit = degree <= 2 ? 16 : 32;
         for (int edge = 0; edge < steps.Length; edge++)
         {
             (int from, int to) = mesh.EndsOf(edge);
@@ -25,7 +25,7 @@ internal static class EdgeDivision
             // The sagitta of a short arc of sweep s over a chord c is c s / 8, and falls with the square of the steps.
             double wanted = Math.Sqrt(pixels * sweep / (8 * LargestSagitta));
             if (degree > 1 || (degree == 1 && mesh.QuadrilateralCount > 0))
-                wanted = Math.Max(wanted, Math.Min(limit, pixels / TargetPixels));
+                wanted = Math.Max(wanted, Math.Min(MostSteps, pixels / TargetPixels));
             int count = 1;
             while (count < wanted && count < 64)
                 count *= 2;
