@@ -45,10 +45,10 @@ Results Compute(ProgressContext context)
         .WithRegionSize("insulation L2", 0.6e-3)
         .WithRegionSize("insulation L3", 0.6e-3)
         .WithRegionSize("pair insulation", 0.3e-3);
-    MeshingResult meshing1 = Mesher.Generate(section, options);
+    MeshingResult made = Mesher.Generate(section, options);
     meshing.Value = meshing.MaxValue;
 
-    ElectrostaticProblem insulators = new ElectrostaticProblem(meshing1.Mesh, degree: 2)
+    ElectrostaticProblem insulators = new ElectrostaticProblem(made.Mesh, degree: 2)
         .WithDielectric("insulation L1", 2.3)
         .WithDielectric("insulation L2", 2.3)
         .WithDielectric("insulation L3", 2.3)
@@ -81,7 +81,7 @@ Results Compute(ProgressContext context)
         .WithFloatingConductor("wire a").WithFloatingConductor("wire b")
         .Solve(progress: new Follow(stressing));
 
-    Results results = new(meshing1, capacitances, service);
+    Results results = new(made, capacitances, service);
     Draw(results, drawing);
     return results;
 }
@@ -127,20 +127,21 @@ void Report(Results results)
     AnsiConsole.WriteLine($"Field: {results.Service.Report}");
     AnsiConsole.WriteLine();
 
-    AnsiConsole.WriteLine("Capacitors between the conductors, to ground on the diagonal, in pF/m:");
+    AnsiConsole.WriteLine("Capacitors between conductors, to ground on the diagonal, in pF/m (blank: below 1e-4):");
     Table table = new Table().AddColumn("");
     foreach (string name in results.Capacitances.Conductors)
     {
-        table.AddColumn(new TableColumn(name).RightAligned());
+        table.AddColumn(new TableColumn(Short(name)).RightAligned().NoWrap());
     }
 
     foreach (string row in results.Capacitances.Conductors)
     {
-        table.AddRow([row, .. results.Capacitances.Conductors.Select(
-            column => (1e12 * results.Capacitances.Mutual(row, column)).ToString("0.000"))]);
+        table.AddRow([Short(row), .. results.Capacitances.Conductors.Select(
+            column => InPicofarads(results.Capacitances.Mutual(row, column)))]);
     }
 
     AnsiConsole.Write(table);
+    AnsiConsole.WriteLine("L1 to L3: phase conductors; SL1 to SL3: their screens; a, b: the signal pair.");
 
     // Screened cores are coaxial, so their capacitance is known.
     double core = results.Capacitances.Mutual("conductor L1", "screen L1");
@@ -159,6 +160,13 @@ void Report(Results results)
     AnsiConsole.WriteLine($"Pictures are in {Path.GetRelativePath(Environment.CurrentDirectory, output)}; {clock.Elapsed.TotalSeconds:0.0} s in all.");
     AnsiConsole.WriteLine("An engineering estimate: decisions on insulation defer to local codes and licensed practice.");
 }
+
+static string Short(string conductor) => conductor
+    .Replace("conductor ", "", StringComparison.Ordinal)
+    .Replace("screen ", "S", StringComparison.Ordinal)
+    .Replace("wire ", "", StringComparison.Ordinal);
+
+static string InPicofarads(double farads) => Math.Abs(farads) < 1e-16 ? "" : (1e12 * farads).ToString("0.00");
 
 internal sealed record Results(MeshingResult Meshing, CapacitanceMatrix Capacitances, ElectrostaticSolution Service)
 {
