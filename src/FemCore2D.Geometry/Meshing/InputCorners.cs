@@ -49,7 +49,9 @@ internal sealed class InputCorners
                 cornersOfPieces[key] = cornersOfPieces.TryGetValue(key, out (int One, int Other) known)
                     ? known with { Other = vertex }
                     : (vertex, vertex);
-                if (region >= 0)
+
+                // In a cusp rounding decides which side comes first, so the region between is not to be trusted.
+                if (region >= 0 || degrees < CuspDegrees)
                     smallest[vertex] = Math.Min(smallest[vertex], degrees);
             }
         }

@@ -210,7 +210,7 @@ internal sealed unsafe partial class Refiner
             {
                 // Vertices may come near an edge that must stay whole, but not so near as to spoil the angle.
                 double height = (b - a).Cross(point - a);
-                mayInsert &= height > 0.4 * length;
+                mayInsert &= height > 0.28 * length;
             }
             else
             {

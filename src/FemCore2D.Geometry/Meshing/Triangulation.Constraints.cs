@@ -32,24 +32,26 @@ internal sealed unsafe partial class Triangulation
             return obstacle;
 
         made.Clear();
-        for (int turn = 0; edge < 0; turn = turn < crossed.Count - 1 ? turn + 1 : 0)
+        while (edge < 0)
         {
-            // Flips that are possible now make the others possible; some always is.
-            int halfEdge = crossed[turn];
+            // An edge that cannot be flipped yet, or crosses still, waits behind the others, whose flips free it.
+            int halfEdge = crossed[0];
+            crossed.RemoveAt(0);
             if (!IsConvexAround(halfEdge))
+            {
+                crossed.Add(halfEdge);
                 continue;
-            crossed.RemoveAt(turn);
+            }
+
             int diagonal = Flip(halfEdge);
             int from = StartOf(diagonal);
             int to = EndOf(diagonal);
             if ((from == start && to == end) || (from == end && to == start))
                 edge = from == start ? diagonal : Link[diagonal];
-            else if (from != start && from != end && to != start && to != end
-                && Crosses(start, end, from, to))
-                crossed.Insert(turn, diagonal);
+            else if (from != start && from != end && to != start && to != end && Crosses(start, end, from, to))
+                crossed.Add(diagonal);
             else
                 made.Add(diagonal);
-            turn--;
         }
 
         if (IsConstrained(edge))

@@ -21,6 +21,18 @@ public sealed class RandomMeshTests
                 RandomOptions(),
                 (fields, options) => { MeshAudit.Generate(RandomArrangements.Draw(fields), options); }));
 
+    [Fact]
+    public void MeshesOfRandomSectionsOnALatticeAreValid() =>
+        Check.One(
+            Config.QuickThrowOnFailure.WithMaxTest(30),
+            Prop.ForAll(LatticeShapes.Shapes(), shapes => { MeshAudit.Generate(ShapeLists.Paint(shapes).Arrange()); }));
+
+    [Fact]
+    public void MeshesOfRandomSectionsAreValid() =>
+        Check.One(
+            Config.QuickThrowOnFailure.WithMaxTest(30),
+            Prop.ForAll(GeneralShapes.Shapes(), shapes => { MeshAudit.Generate(ShapeLists.Paint(shapes).Arrange()); }));
+
     private static Arbitrary<MeshOptions> RandomOptions() => Arb.From(
         from size in Gen.Elements(0.07, 0.2, 1.0, 10.0)
         from growth in Gen.Elements(1.05, 1.2, 1.6, 3)
