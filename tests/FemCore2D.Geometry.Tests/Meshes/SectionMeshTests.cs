@@ -45,6 +45,42 @@ public class SectionMeshTests
         }
     }
 
+    [Fact]
+    public void TenRoundsTowardsAnArcKeepTheAnglesOfACurvedMesh()
+    {
+        CrossSection section = CrossSection.Empty
+            .Fill(Outline.Circle(Point2D.Origin, 2, "rim"), "air")
+            .Fill(Outline.Circle(new(0.3, 0.1), 1, "wire"), "copper");
+        Mesh mesh = Mesher.Generate(section).Mesh;
+        int coarse = mesh.CellCount;
+        double first = SmallestAngle(mesh);
+        for (int round = 0; round < 10; round++)
+        {
+            // Cells on both sides of the inner circle, in which it bends in and out, and one on the rim.
+            mesh = mesh.RefineCells(
+                mesh.Locator.CellAt(new(0.3, 1.0999)), mesh.Locator.CellAt(new(0.3, 1.1001)),
+                mesh.Locator.NearestCell(new(2.0001, 0), out _)).Mesh;
+
+            // Bisection brings no angle below half the smallest of a triangle; the rest is the bend of the arcs.
+            Assert.True(SmallestAngle(mesh) > 0.4 * first);
+        }
+
+        MeshInvariants.Check(mesh);
+        MeshInvariants.Near(3 * Math.PI, mesh.AreaOfRegion("air"));
+        MeshInvariants.Near(Math.PI, mesh.AreaOfRegion("copper"));
+        MeshInvariants.Near(2 * Math.PI, mesh.LengthOfBoundary("wire"));
+        Assert.InRange(mesh.CellCount - coarse, 60, 200);
+    }
+
+    private static double SmallestAngle(Mesh mesh) => Enumerable.Range(0, 3 * mesh.TriangleCount).Min(corner =>
+    {
+        ReadOnlySpan<int> corners = mesh.VerticesOf(corner / 3);
+        Point2D place = mesh.Vertices[corners[corner % 3]];
+        Vector2D next = mesh.Vertices[corners[(corner + 1) % 3]] - place;
+        Vector2D previous = mesh.Vertices[corners[(corner + 2) % 3]] - place;
+        return Math.Atan2(next.Cross(previous), next.Dot(previous));
+    });
+
     private static class SectionMeshes
     {
         public static Arbitrary<Mesh> Meshes() => MeshGenerators.OfSections(SectionGenerators.All()).ToArbitrary();

@@ -26,8 +26,8 @@ internal sealed class UniformRefinement
 
     public static RefinedMesh Refine(Mesh mesh)
     {
-        // Two entries an edge, and at most two edges a quadrilateral's quarter or three halves a triangle's.
-        if (16L * (mesh.TriangleCount + mesh.QuadrilateralCount) > Array.MaxLength)
+        // The arrays of edges hold at most two numbers for each of sixteen sides of a cell's quarters.
+        if (32L * mesh.CellCount > Array.MaxLength)
         {
             throw new MeshingException(
                 $"A mesh of {mesh.CellCount} cells cannot be refined as a whole: the result would not fit into arrays. " +
