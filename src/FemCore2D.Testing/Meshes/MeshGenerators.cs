@@ -38,8 +38,8 @@ public static class MeshGenerators
 
     /// <summary>Sectors of rings, of curved quadrilaterals or of triangles, in the region <c>ring</c>.</summary>
     public static Gen<Mesh> RingSectors() =>
-        from centre in Centres
         from inner in NumberGenerators.MagnitudeBetween(0.1, 2)
+        from centre in Centres(inner)
         from thickness in NumberGenerators.Between(0.3, 2)
         from start in NumberGenerators.Between(-Math.PI, Math.PI)
         from sweep in NumberGenerators.Between(0.2, Math.PI)
@@ -54,8 +54,8 @@ public static class MeshGenerators
 
     /// <summary>Whole rings around a disc of triangles, in the regions <c>ring</c> and <c>core</c>.</summary>
     public static Gen<Mesh> Rings() =>
-        from centre in Centres
         from inner in NumberGenerators.MagnitudeBetween(0.5, 2)
+        from centre in Centres(inner)
         from thickness in NumberGenerators.Between(0.2, 2)
         from across in Gen.Choose(1, 3)
         from wish in Gen.Choose(3, 6)
@@ -67,8 +67,8 @@ public static class MeshGenerators
 
     /// <summary>Discs of triangles around their centre, in the region <c>core</c> with the boundary <c>rim</c>.</summary>
     public static Gen<Mesh> Fans() =>
-        from centre in Centres
         from radius in NumberGenerators.MagnitudeBetween(1e-3, 10)
+        from centre in Centres(radius)
         from count in Gen.Choose(4, 12)
         select Fan(centre, radius, count, "core", "rim");
 
@@ -77,8 +77,8 @@ public static class MeshGenerators
     /// boundary <c>rim</c>.
     /// </summary>
     public static Gen<Mesh> Discs() =>
-        from centre in Centres
         from radius in NumberGenerators.MagnitudeBetween(1e-3, 10)
+        from centre in Centres(radius)
         from wish in Gen.Choose(1, 3)
         from layers in Gen.Choose(1, 3)
         from share in NumberGenerators.Between(0.3, 0.6)
@@ -93,10 +93,10 @@ public static class MeshGenerators
         return sections.Select(section => Mesher.Generate(section).Mesh);
     }
 
-    private static Gen<Point2D> Centres =>
+    private static Gen<Point2D> Centres(double radius) =>
         from x in NumberGenerators.Between(-5, 5)
         from y in NumberGenerators.Between(-5, 5)
-        select new Point2D(x, y);
+        select new Point2D(x * radius, y * radius);
 
     /// <summary>The number of edges around an arc that lets each rise over its chord by a quarter of a layer.</summary>
     private static int LeastAround(double sweep, double radius, double layer) =>

@@ -81,15 +81,16 @@ public class CellLocatorTests
         int cell = mesh.Locator.NearestCell(point, out double distance);
         Assert.InRange(cell, 0, mesh.CellCount - 1);
 
-        // Points sampled along all edges come no nearer, and come as near up to the spacing of the samples.
         double nearest = distance;
         if (mesh.Locator.CellAt(point) < 0)
         {
             nearest = Enumerable.Range(0, mesh.EdgeCount).Min(edge => Distance(mesh, edge, point));
         }
 
-        double scale = low.DistanceTo(high);
-        Assert.InRange(distance, nearest - (0.01 * scale), nearest + (1e-12 * scale));
+        // The chords of a hundredth of a quarter turn leave their arcs by at most an eighth of their length times
+        // their sweep, to either side.
+        double chordError = 0.01 * mesh.Bounds.Diagonal * (0.01 * 0.5 * Math.PI) / 8;
+        Assert.InRange(distance, nearest - chordError, nearest + chordError);
     }
 
     [Theory]
