@@ -7,6 +7,7 @@ namespace FemCore2D.Geometry;
 internal sealed class MeshPlan
 {
     private const double DefaultCellsAcross = 30;
+    private const double FinestOverTolerance = 16;
 
     public MeshPlan(Arrangement arrangement, MeshOptions options)
     {
@@ -89,6 +90,15 @@ internal sealed class MeshPlan
     /// </summary>
     public void RefuseHopelessSizes()
     {
+        foreach ((string name, double size) in Options.BoundarySizes.Concat(Options.PointSizes))
+        {
+            if (size < FinestOverTolerance * Arrangement.Tolerance)
+            {
+                throw new MeshingException(string.Create(CultureInfo.InvariantCulture,
+                    $"A size of {size:G4} m is asked for at '{name}', but points of this section count as one within {Arrangement.Tolerance:G3} m. Ask for {FinestOverTolerance * Arrangement.Tolerance:G3} m or more there."));
+            }
+        }
+
         double[] areas = new double[RegionCaps.Length];
         for (int piece = 0; piece < Curves.Length; piece++)
         {

@@ -8,8 +8,8 @@ namespace FemCore2D.Geometry;
 /// </summary>
 internal sealed class SizeField
 {
-    private const int FewSources = 3;
-    private const int ManySources = 8;
+    private const int FewSources = 6;
+    private const int ManySources = 12;
     private const int LargestDepth = 40;
 
     private readonly SizeSource[] sources;

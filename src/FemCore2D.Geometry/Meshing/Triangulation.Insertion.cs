@@ -38,16 +38,26 @@ internal sealed unsafe partial class Triangulation
         int* origin = Origin;
         int* link = Link;
         double* xy = Coordinates;
+        int[] rimHere = rim;
+        int[] dugHere = dug;
+        int[] pendingHere = pending;
         int rims = 0;
         int dugs = 0;
         int waiting = 3;
-        dug[dugs++] = triangle;
-        pending[0] = (4 * triangle) + 2;
-        pending[1] = (4 * triangle) + 1;
-        pending[2] = 4 * triangle;
+        dugHere[dugs++] = triangle;
+        pendingHere[0] = (4 * triangle) + 2;
+        pendingHere[1] = (4 * triangle) + 1;
+        pendingHere[2] = 4 * triangle;
         while (waiting > 0)
         {
-            int halfEdge = pending[--waiting];
+            // A cavity of n triangles has n + 2 edges around it, and no more than these wait.
+            if (dugs + 4 >= dugHere.Length)
+            {
+                GrowScratch();
+                (rimHere, dugHere, pendingHere) = (rim, dug, pending);
+            }
+
+            int halfEdge = pendingHere[--waiting];
             int beyond = link[halfEdge];
             if (beyond >= 0)
             {
@@ -58,18 +68,14 @@ internal sealed unsafe partial class Triangulation
                 double* c = xy + (2 * origin[two]);
                 if (halfEdge == opened || Predicates.InCircle(a[0], a[1], b[0], b[1], c[0], c[1], x, y) > 0)
                 {
-                    if (dugs + 2 >= dug.Length || waiting + 2 >= pending.Length)
-                        GrowScratch();
-                    dug[dugs++] = beyond >> 2;
-                    pending[waiting++] = two;
-                    pending[waiting++] = one;
+                    dugHere[dugs++] = beyond >> 2;
+                    pendingHere[waiting++] = two;
+                    pendingHere[waiting++] = one;
                     continue;
                 }
             }
 
-            if (rims == rim.Length)
-                GrowScratch();
-            rim[rims++] = halfEdge;
+            rimHere[rims++] = halfEdge;
         }
 
         RimCount = rims;

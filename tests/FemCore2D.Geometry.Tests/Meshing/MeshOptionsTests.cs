@@ -137,6 +137,18 @@ public sealed class MeshOptionsTests
         Assert.Contains("20000000", error.Message, StringComparison.Ordinal);
     }
 
+    [Theory]
+    [InlineData(1e-12)]
+    [InlineData(1e-300)]
+    public void SizesFinerThanTheToleranceAreRefused(double size)
+    {
+        Arrangement square = new Drawn().Rectangle(0, 0, 1, 1, "air").Point("tip", 0, 0).Done();
+        Assert.Contains("'tip'", Refused(MeshOptions.Default.WithPointSize("tip", size)), StringComparison.Ordinal);
+        Assert.Contains("'left'", Refused(MeshOptions.Default.WithBoundarySize("left", size)), StringComparison.Ordinal);
+
+        string Refused(MeshOptions options) => Assert.Throws<MeshingException>(() => Mesher.Generate(square, options)).Message;
+    }
+
     [Fact]
     public void RefusalNamesRegionSizeCellsAndRemedy()
     {
