@@ -139,10 +139,10 @@ public class CompositionTests
         [
             QuadrilateralPatch.Straight(new(0, 0), new(1, 0), new(1, 1), new(0, 1), "a").Divide(2, 2),
             new QuadrilateralPatch(
-                new PatchSide(new(2, 0), new(3, 0), 0, "far"),
-                new PatchSide(new(3, 0), new(3, 1)),
-                new PatchSide(new(3, 1), new(2, 1)),
-                new PatchSide(new(2, 1), new(2, 0)),
+                new OutlinePiece(new(2, 0), new(3, 0), 0, "far"),
+                new OutlinePiece(new(3, 0), new(3, 1)),
+                new OutlinePiece(new(3, 1), new(2, 1)),
+                new OutlinePiece(new(2, 1), new(2, 0)),
                 "b").Divide(2, 2),
         ]);
         var space = new NodeSpace(apart, 2);
