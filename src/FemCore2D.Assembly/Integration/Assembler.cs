@@ -1,3 +1,4 @@
+using System.Collections.Concurrent;
 using System.Numerics;
 using System.Runtime.ExceptionServices;
 using FemCore2D.Geometry;
@@ -168,19 +169,21 @@ public sealed class Assembler
             return;
         }
 
+        // The runtime starts more workers than threads, one after another: later ones take over from those that ended.
+        var idle = new ConcurrentBag<CellScratch>();
         try
         {
             Parallel.For(
                 0,
                 plan.Chunks.Count,
                 Options(cancellationToken),
-                newScratch,
+                () => idle.TryTake(out CellScratch? scratch) ? scratch : newScratch(),
                 (chunk, _, scratch) =>
                 {
                     run(chunk, scratch);
                     return scratch;
                 },
-                _ => { });
+                idle.Add);
         }
         catch (AggregateException faults)
         {

@@ -13,12 +13,15 @@ internal static class CellKernels
     /// <summary>The combination of reference matrices that belongs to a coupling constant in an affine cell.</summary>
     public static void Combine(in Coupling<double> m, ChannelIntegrals integrals, Span<double> local)
     {
-        local.Clear();
-        AddMultiple(m.ValueValue, integrals.Of(0, 0), local);
+        SetMultiple(m.ValueValue, integrals.Of(0, 0), local);
         AddMultiple(m.XX, integrals.Of(1, 1), local);
         AddMultiple(m.YY, integrals.Of(2, 2), local);
-        AddPair(m.ValueX, m.XValue, 0, 0, 1, integrals, local);
-        AddPair(m.ValueY, m.YValue, 1, 0, 2, integrals, local);
+        if (m.ValueX != 0 || m.ValueY != 0 || m.XValue != 0 || m.YValue != 0)
+        {
+            AddPair(m.ValueX, m.XValue, 0, 0, 1, integrals, local);
+            AddPair(m.ValueY, m.YValue, 1, 0, 2, integrals, local);
+        }
+
         AddPair(m.XY, m.YX, 2, 1, 2, integrals, local);
     }
 
@@ -116,8 +119,7 @@ internal static class CellKernels
     /// <summary>The combination of reference vectors that belongs to a load constant in an affine cell.</summary>
     public static void Combine(in Load<double> load, ChannelIntegrals integrals, Span<double> local)
     {
-        local.Clear();
-        AddMultiple(load.Value, integrals.Of(0), local);
+        SetMultiple(load.Value, integrals.Of(0), local);
         AddMultiple(load.X, integrals.Of(1), local);
         AddMultiple(load.Y, integrals.Of(2), local);
     }
@@ -171,6 +173,17 @@ internal static class CellKernels
             {
                 local[(i * stride) + j] = local[(j * stride) + i];
             }
+        }
+    }
+
+    private static void SetMultiple(double factor, ReadOnlySpan<double> from, Span<double> to)
+    {
+        var spread = Vector256.Create(factor);
+        ref double source = ref MemoryMarshal.GetReference(from);
+        ref double target = ref MemoryMarshal.GetReference(to);
+        for (nuint k = 0; k < (nuint)from.Length; k += 4)
+        {
+            (spread * Vector256.LoadUnsafe(ref source, k)).StoreUnsafe(ref target, k);
         }
     }
 

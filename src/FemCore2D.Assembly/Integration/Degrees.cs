@@ -48,7 +48,7 @@ internal sealed class Degrees
     /// <summary>The highest degree of all regions and cells.</summary>
     public int Highest { get; }
 
-    /// <summary>Whether the coefficients do not change within a cell of a region, and the caller asks for no better rule.</summary>
+    /// <summary>Whether the coefficients do not change within a cell of a region; straight cells are then integrated exactly.</summary>
     public bool IsConstantIn(int region) => coefficients[region] == 0;
 
     /// <summary>The degree for a cell.</summary>
