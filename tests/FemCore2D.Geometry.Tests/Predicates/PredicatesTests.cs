@@ -42,7 +42,7 @@ public sealed class PredicatesTests
     [Fact]
     public void NearlyDegenerateSamplesContainZerosAndBothSigns()
     {
-        int[] signs = [.. NearlyDegeneratePoints().Generator.Sample(5000)
+        int[] signs = [.. NearlyDegeneratePoints().Generator.Sample(60000)
             .Select(p => Math.Sign(Predicates.InCircle(p[0], p[1], p[2], p[3])))];
         Assert.Contains(0, signs);
         Assert.Contains(1, signs);
