@@ -21,13 +21,21 @@ public class AllocationTests
             ConjugateGradients<T> solver = new(matrix, withPreconditioner ? new IncompleteCholesky<T>(matrix) : null);
             T[] b = Matrices.Vector<T>(matrix.RowCount, 1);
             T[] x = new T[b.Length];
-            Watch watch = new();
             IterationOptions options = new() { IterationLimit = 30, Threads = threads };
-            solver.Solve(b, x, options);
-            Array.Clear(x);
-            solver.Solve(b, x, options, watch);
-            Assert.Equal(0, watch.Bytes);
-            Assert.Equal(30, watch.Iterations);
+
+            // The runtime itself allocates now and then, as it compiles a method anew or adds a thread to its pool. What
+            // an iteration allocates it would allocate each time.
+            long least = long.MaxValue;
+            for (int attempt = 0; attempt < 20 && least > 0; attempt++)
+            {
+                Watch watch = new();
+                Array.Clear(x);
+                solver.Solve(b, x, options, watch);
+                Assert.Equal(30, watch.Iterations);
+                least = Math.Min(least, watch.Bytes);
+            }
+
+            Assert.Equal(0, least);
         }
     }
 
