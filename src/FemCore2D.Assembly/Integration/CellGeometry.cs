@@ -62,15 +62,12 @@ internal readonly struct CellGeometry
         get => new(alongXi, alongEta);
     }
 
-    public Jacobian JacobianAt(Point2D reference)
-    {
-        if (curved is not null)
-        {
-            return curved.JacobianAt(cell, reference);
-        }
-
-        return new Jacobian(alongXi + (reference.Y * twist), alongEta + (reference.X * twist));
-    }
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public Jacobian JacobianAt(Point2D reference) => IsAffine
+        ? Jacobian
+        : curved is null
+        ? new Jacobian(alongXi + (reference.Y * twist), alongEta + (reference.X * twist))
+        : curved.JacobianAt(cell, reference);
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public Point2D PlaceAt(Point2D reference) => curved is null
