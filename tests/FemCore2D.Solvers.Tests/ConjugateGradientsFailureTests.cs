@@ -90,6 +90,18 @@ public class ConjugateGradientsFailureTests
     }
 
     [Fact]
+    public void SquaresThatVanishDoNotPassForSolved()
+    {
+        ConjugateGradients<double> solver = new(SparseMatrices.Identity<double>(3));
+        IterationReport report = solver.Solve([1e-200, 0, 0]).Report;
+        Assert.Equal(StopReason.Underflow, report.Reason);
+        Assert.Contains("multiple", report.Describe(), StringComparison.Ordinal);
+        Assert.True(solver.Solve([1e-200, 0, 0], new IterationOptions { AbsoluteTolerance = 1e-30 }).Report.HasConverged);
+        IterationResult<double> small = solver.Solve([1e-140, 0, 0]).EnsureConverged();
+        Assert.Equal(1e-140, small.Solution[0], 1e-150);
+    }
+
+    [Fact]
     public void NothingToDoIsDone()
     {
         IterationResult<double> zero = new ConjugateGradients<double>(Matrices.Laplacian<double>(3)).Solve(new double[9]);

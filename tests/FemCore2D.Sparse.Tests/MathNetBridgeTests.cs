@@ -38,7 +38,21 @@ public class MathNetBridgeTests
         Matrix<double> theirs = ours.ToMathNetSparse();
         theirs[0, 0] = 5;
         Assert.Equal(1, ours[0, 0]);
-        Assert.Throws<ArgumentException>(() => new SparseMatrix<double>(SparsePattern.Diagonal(0)).ToMathNetDense());
+    }
+
+    [Theory]
+    [InlineData(0, 0)]
+    [InlineData(0, 3)]
+    [InlineData(3, 0)]
+    [InlineData(2, 2)]
+    public void MatricesWithoutEntriesPass(int rows, int columns)
+    {
+        SparseMatrix<double> matrix = new(SparsePattern.FromPlaces(rows, columns, [], []));
+        foreach (Matrix<double> foreign in new[] { matrix.ToMathNetSparse(), matrix.ToMathNetDense() })
+        {
+            Assert.Equal((rows, columns), (foreign.RowCount, foreign.ColumnCount));
+            Assert.True(foreign.ToSparseMatrix().Pattern.HasSameEntriesAs(matrix.Pattern));
+        }
     }
 
     [Fact]

@@ -102,7 +102,12 @@ public class MatrixMarketTests
                 MatrixMarketFormat format = new(layout, MatrixMarketField.Complex, symmetry);
                 byte[] text = Write(matrix, format);
                 Assert.Equal(format, MatrixMarket.ReadFormat(new MemoryStream(text)));
-                AlgebraTests.AssertEqual(matrix.ToMathNetDense(), Read<Complex>(text));
+                SparseMatrix<Complex> back = Read<Complex>(text);
+                AlgebraTests.AssertEqual(matrix.ToMathNetDense(), back);
+                Assert.True(
+                    layout == MatrixMarketLayout.Array
+                    || symmetry == MatrixMarketSymmetry.SkewSymmetric
+                    || back.Pattern.HasSameEntriesAs(matrix.Pattern));
             }
         }
     }
@@ -145,11 +150,43 @@ public class MatrixMarketTests
             SparseMatrix<double> back = MatrixMarket.Read<double>(path);
             Assert.True(matrix.Pattern.HasSameEntriesAs(back.Pattern));
             AssertSameBits(matrix, back);
+            MatrixMarket.WriteVector<double>([1, -0.0, 1.0 / 3], path);
+            Assert.Equal("1 -0 0.3333333333333333", string.Join(' ', MatrixMarket.ReadVector<double>(path)));
         }
         finally
         {
             File.Delete(path);
         }
+    }
+
+    /// <summary>Its mirror would not come back, so a stored zero without one makes a matrix general.</summary>
+    [Fact]
+    public void SymmetryOfTheStoredEntriesCounts()
+    {
+        SparseMatrix<double> lonelyZero = SparseMatrices.FromTriplets<double>(2, 2, [0], [1], [0]);
+        Assert.True(lonelyZero.IsSymmetric());
+        foreach (MatrixMarketSymmetry symmetry in new[] { MatrixMarketSymmetry.Symmetric, MatrixMarketSymmetry.SkewSymmetric })
+        {
+            Assert.Throws<ArgumentException>(() => Write(lonelyZero, new(Symmetry: symmetry)));
+        }
+    }
+
+    [Fact]
+    public void CommentsThatTheFormatCannotHoldAreRefused()
+    {
+        SparseMatrix<double> matrix = SparseMatrices.Identity<double>(1);
+        Assert.Throws<ArgumentException>(() => MatrixMarket.Write(matrix, Stream.Null, comment: new string('x', 1023)));
+        using MemoryStream stream = new();
+        MatrixMarket.Write(matrix, stream, comment: new string('x', 1022) + "\r\n\nend");
+        stream.Position = 0;
+        Assert.Equal(1, MatrixMarket.Read<double>(stream)[0, 0]);
+    }
+
+    [Fact]
+    public void TheSignatureOfUtf8IsSkipped()
+    {
+        byte[] text = [.. "\uFEFF%%MatrixMarket matrix array real general\n1 1\n7"u8];
+        Assert.Equal(7, MatrixMarket.Read<double>(new MemoryStream(text))[0, 0]);
     }
 
     [Fact]

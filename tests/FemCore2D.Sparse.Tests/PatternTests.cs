@@ -72,6 +72,7 @@ public class PatternTests
     [Fact]
     public void BrokenArraysAreRefused()
     {
+        Assert.Throws<SizeLimitException>(() => SparsePattern.FromCompressedRows(int.MaxValue, [0], []));
         Assert.Throws<ArgumentOutOfRangeException>(() => SparsePattern.FromCompressedRows(-1, [0], []));
         Assert.Throws<ArgumentException>(() => SparsePattern.FromCompressedRows(2, [], []));
         Assert.Throws<ArgumentException>(() => SparsePattern.FromCompressedRows(2, [1, 1], [0]));

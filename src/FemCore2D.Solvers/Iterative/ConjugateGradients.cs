@@ -19,6 +19,9 @@ namespace FemCore2D.Solvers;
 public sealed class ConjugateGradients<T>
     where T : unmanaged, INumberBase<T>
 {
+    /// <summary>The norm below which the squares of the entries lose their digits.</summary>
+    private const double LeastNorm = 1e-145;
+
     private readonly ConjugateGradientsWork<T> work;
     private double[] history = new double[64];
     private int isBusy;
@@ -105,7 +108,7 @@ public sealed class ConjugateGradients<T>
             fixed (T* x = solution)
             {
                 work.Begin(b, x, (options ?? new()).Threads);
-                return Iterate(options ?? new(), progress, cancellationToken);
+                return Iterate(rightHandSide, options ?? new(), progress, cancellationToken);
             }
         }
         finally
@@ -115,7 +118,10 @@ public sealed class ConjugateGradients<T>
     }
 
     private IterationReport Iterate(
-        IterationOptions options, IProgress<IterationProgress>? progress, CancellationToken cancellationToken)
+        ReadOnlySpan<T> rightHandSide,
+        IterationOptions options,
+        IProgress<IterationProgress>? progress,
+        CancellationToken cancellationToken)
     {
         double norm = Math.Sqrt(work.RightHandSideSquared());
         double target = Math.Max(options.RelativeTolerance * norm, options.AbsoluteTolerance);
@@ -128,6 +134,11 @@ public sealed class ConjugateGradients<T>
         if (!double.IsFinite(residual) || !double.IsFinite(norm))
         {
             return Report(StopReason.NotFinite);
+        }
+
+        if (Math.Max(norm, options.AbsoluteTolerance) < LeastNorm && rightHandSide.ContainsAnyExcept(T.Zero))
+        {
+            return Report(StopReason.Underflow);
         }
 
         if (residual <= target)

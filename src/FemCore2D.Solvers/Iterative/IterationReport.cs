@@ -62,6 +62,9 @@ public sealed class IterationReport
             StopReason.NotFinite =>
                 $"Stopped {state}: a number is infinite or not a number. Check the matrix, the right-hand side and the "
                 + "initial guess.",
+            StopReason.Underflow =>
+                $"Stopped {state}: the right-hand side is so small that its squares vanish in double precision. Solve "
+                + "for a multiple of it, or set an absolute tolerance.",
             _ =>
                 $"Stopped {state}: the residual no longer falls. Either the tolerance lies below what rounding allows, "
                 + "or the system has no solution; loosen the tolerance, or check that a value is fixed.",

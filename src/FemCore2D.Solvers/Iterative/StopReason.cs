@@ -18,6 +18,9 @@ public enum StopReason
     /// <summary>A number overflowed or was not a number from the start.</summary>
     NotFinite,
 
+    /// <summary>The right-hand side is not zero, but so small that its squares vanish in double precision.</summary>
+    Underflow,
+
     /// <summary>The residual no longer falls: rounding, or a system without a solution, bounds it.</summary>
     Stagnation,
 }

@@ -10,12 +10,11 @@ public static class MathNetBridge
 {
     /// <summary>The same matrix in the compressed rows of MathNet.Numerics.</summary>
     /// <typeparam name="T">The number type: <see cref="double"/> or <see cref="Complex"/>.</typeparam>
-    /// <param name="matrix">The matrix, with at least one row and one column, as MathNet.Numerics asks.</param>
-    /// <exception cref="ArgumentException">The matrix has no row or no column.</exception>
+    /// <param name="matrix">The matrix.</param>
     public static Matrix<T> ToMathNetSparse<T>(this SparseMatrix<T> matrix)
         where T : unmanaged, INumberBase<T>
     {
-        CheckNotEmpty(matrix);
+        ArgumentNullException.ThrowIfNull(matrix);
         return Matrix<T>.Build.SparseFromCompressedSparseRowFormat(
             matrix.RowCount,
             matrix.ColumnCount,
@@ -27,13 +26,12 @@ public static class MathNetBridge
 
     /// <summary>The same matrix in a dense array of MathNet.Numerics.</summary>
     /// <typeparam name="T">The number type: <see cref="double"/> or <see cref="Complex"/>.</typeparam>
-    /// <param name="matrix">The matrix, with at least one row and one column, as MathNet.Numerics asks.</param>
-    /// <exception cref="ArgumentException">The matrix has no row or no column.</exception>
+    /// <param name="matrix">The matrix.</param>
     /// <exception cref="SizeLimitException">The dense array would have more numbers than an array can have.</exception>
     public static Matrix<T> ToMathNetDense<T>(this SparseMatrix<T> matrix)
         where T : unmanaged, INumberBase<T>
     {
-        CheckNotEmpty(matrix);
+        ArgumentNullException.ThrowIfNull(matrix);
         SizeLimitException.CheckEntries((long)matrix.RowCount * matrix.ColumnCount, "The dense matrix");
         Matrix<T> dense = Matrix<T>.Build.Dense(matrix.RowCount, matrix.ColumnCount);
         for (int row = 0; row < matrix.RowCount; row++)
@@ -107,16 +105,5 @@ public static class MathNetBridge
         ArgumentNullException.ThrowIfNull(matrix);
         ArgumentNullException.ThrowIfNull(vector);
         return MathNet.Numerics.LinearAlgebra.Vector<T>.Build.Dense(matrix.Multiply(vector.AsArray() ?? vector.ToArray()));
-    }
-
-    private static void CheckNotEmpty<T>(SparseMatrix<T> matrix)
-        where T : unmanaged, INumberBase<T>
-    {
-        ArgumentNullException.ThrowIfNull(matrix);
-        if (matrix.RowCount == 0 || matrix.ColumnCount == 0)
-        {
-            throw new ArgumentException(
-                $"MathNet.Numerics has no matrices of size {matrix.RowCount} x {matrix.ColumnCount}.", nameof(matrix));
-        }
     }
 }

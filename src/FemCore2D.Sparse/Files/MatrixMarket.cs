@@ -62,6 +62,17 @@ public static class MatrixMarket
         return vector;
     }
 
+    /// <summary>Reads a vector, which is a matrix of one column, from a file.</summary>
+    /// <inheritdoc cref="ReadVector{T}(Stream, CancellationToken)"/>
+    /// <param name="path">The path of the file.</param>
+    /// <param name="cancellationToken">Stops the work.</param>
+    public static T[] ReadVector<T>(string path, CancellationToken cancellationToken = default)
+        where T : unmanaged, INumberBase<T>
+    {
+        using FileStream stream = File.OpenRead(path);
+        return ReadVector<T>(stream, cancellationToken);
+    }
+
     /// <summary>Reads what the first line of a stream states; the stream stays open, behind some part of the text.</summary>
     /// <param name="stream">The text.</param>
     /// <exception cref="MalformedFileException">The first line is not one of the format.</exception>
@@ -100,11 +111,16 @@ public static class MatrixMarket
     /// <param name="comment">Lines of comment, or none.</param>
     /// <param name="cancellationToken">Stops the work.</param>
     /// <exception cref="ArgumentException">
-    /// The format does not exist in the standard, or the matrix is not of the kind it states: not symmetric, not of
-    /// whole numbers, not real; or an entry is not finite, which the format cannot state.
+    /// The format does not exist in the standard, or the matrix is not of the kind it states: not symmetric in its
+    /// stored entries and their values, not of whole numbers, not real; or an entry is not finite, which the format
+    /// cannot state; or a line of the comment is longer than the format allows. Nothing is written then.
     /// </exception>
     /// <exception cref="IOException">The text cannot be written.</exception>
     /// <exception cref="OperationCanceledException">The work was stopped.</exception>
+    /// <remarks>
+    /// Stored zeros are written and come back, save those on the diagonal of a skew-symmetric matrix, for which the
+    /// format has no place.
+    /// </remarks>
     public static void Write<T>(
         SparseMatrix<T> matrix,
         Stream stream,
@@ -115,6 +131,20 @@ public static class MatrixMarket
     {
         ArgumentNullException.ThrowIfNull(stream);
         new MatrixMarketWriter<T>(matrix, format, comment).Write(stream, cancellationToken);
+    }
+
+    /// <summary>Writes a vector to a file, which is replaced if it exists, as an array of one column.</summary>
+    /// <inheritdoc cref="WriteVector{T}(ReadOnlySpan{T}, Stream, CancellationToken)"/>
+    /// <param name="vector">The vector.</param>
+    /// <param name="path">The path of the file.</param>
+    /// <param name="cancellationToken">Stops the work.</param>
+    public static void WriteVector<T>(
+        ReadOnlySpan<T> vector, string path, CancellationToken cancellationToken = default)
+        where T : unmanaged, INumberBase<T>
+    {
+        MatrixMarketWriter<T> writer = WriterOf(vector);
+        using FileStream stream = File.Create(path);
+        writer.Write(stream, cancellationToken);
     }
 
     /// <summary>Writes a vector to a stream, as an array of one column; the stream stays open.</summary>
@@ -129,6 +159,13 @@ public static class MatrixMarket
         ReadOnlySpan<T> vector, Stream stream, CancellationToken cancellationToken = default)
         where T : unmanaged, INumberBase<T>
     {
+        ArgumentNullException.ThrowIfNull(stream);
+        WriterOf(vector).Write(stream, cancellationToken);
+    }
+
+    private static MatrixMarketWriter<T> WriterOf<T>(ReadOnlySpan<T> vector)
+        where T : unmanaged, INumberBase<T>
+    {
         int[] starts = new int[vector.Length + 1];
         for (int row = 0; row < vector.Length; row++)
         {
@@ -137,6 +174,6 @@ public static class MatrixMarket
 
         SparseMatrix<T> column = new(new SparsePattern(1, starts, new int[vector.Length]), vector);
         MatrixMarketField field = Scalar.IsComplex<T>() ? MatrixMarketField.Complex : MatrixMarketField.Real;
-        Write(column, stream, new(MatrixMarketLayout.Array, field), null, cancellationToken);
+        return new MatrixMarketWriter<T>(column, new(MatrixMarketLayout.Array, field), null);
     }
 }

@@ -1,47 +1,5 @@
 namespace FemCore2D.Sparse;
 
-/// <summary>How a Matrix Market file lays out the entries of a matrix.</summary>
-public enum MatrixMarketLayout
-{
-    /// <summary>Row, column and value of each stored entry.</summary>
-    Coordinate,
-
-    /// <summary>The values of all entries, column after column.</summary>
-    Array,
-}
-
-/// <summary>The numbers that a Matrix Market file holds.</summary>
-public enum MatrixMarketField
-{
-    /// <summary>Real numbers.</summary>
-    Real,
-
-    /// <summary>Whole numbers; the word in the file is integer.</summary>
-    Whole,
-
-    /// <summary>Complex numbers, as real and imaginary part.</summary>
-    Complex,
-
-    /// <summary>No numbers, only places; read as ones.</summary>
-    Pattern,
-}
-
-/// <summary>Which entries a Matrix Market file leaves out because others tell them.</summary>
-public enum MatrixMarketSymmetry
-{
-    /// <summary>None.</summary>
-    General,
-
-    /// <summary>Those above the diagonal, which equal the mirrored ones.</summary>
-    Symmetric,
-
-    /// <summary>Those on the diagonal, which are zero, and above it, which are the negative of the mirrored ones.</summary>
-    SkewSymmetric,
-
-    /// <summary>Those above the diagonal, which are the conjugate of the mirrored ones.</summary>
-    Hermitian,
-}
-
 /// <summary>The kind of a Matrix Market file, as its first line states it.</summary>
 /// <param name="Layout">How the entries are laid out.</param>
 /// <param name="Field">The numbers.</param>

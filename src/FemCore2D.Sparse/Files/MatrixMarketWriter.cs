@@ -29,6 +29,7 @@ internal sealed class MatrixMarketWriter<T>
             throw new ArgumentException($"There is no such format: {fault}.", nameof(format));
         }
 
+        CheckComment();
         CheckValues();
         CheckSymmetry();
     }
@@ -40,7 +41,7 @@ internal sealed class MatrixMarketWriter<T>
         head.Append(format.FirstLine).Append('\n');
         if (comment.Length > 0)
         {
-            foreach (string line in comment.ReplaceLineEndings("\n").Split('\n'))
+            foreach (ReadOnlySpan<char> line in comment.AsSpan().EnumerateLines())
             {
                 head.Append("% ").Append(line).Append('\n');
             }
@@ -217,15 +218,32 @@ internal sealed class MatrixMarketWriter<T>
         bool fits = (format.Field, format.Symmetry) switch
         {
             (_, MatrixMarketSymmetry.General) => true,
-            (MatrixMarketField.Pattern, _) => matrix.Pattern.IsSymmetric(),
+            _ when !matrix.Pattern.IsSymmetric() => false,
+            (MatrixMarketField.Pattern, _) => true,
             (_, MatrixMarketSymmetry.Symmetric) => matrix.IsSymmetric(),
             (_, MatrixMarketSymmetry.Hermitian) => matrix.IsHermitian(),
-            _ => matrix.RowCount == matrix.ColumnCount && matrix.Add(matrix.Transpose()).LargestMagnitude() == 0,
+            _ => matrix.Add(matrix.Transpose()).LargestMagnitude() == 0,
         };
         if (!fits)
         {
             throw new ArgumentException(
-                $"The matrix is not {MatrixMarketFormat.Word(format.Symmetry)}, as the format states.", nameof(matrix));
+                $"The matrix is not {MatrixMarketFormat.Word(format.Symmetry)}, as the format states, in its stored "
+                + "entries and their values. Write it as general.",
+                nameof(matrix));
+        }
+    }
+
+    private void CheckComment()
+    {
+        const int LongestLine = 1022;
+        foreach (ReadOnlySpan<char> line in comment.AsSpan().EnumerateLines())
+        {
+            if (Encoding.UTF8.GetByteCount(line) > LongestLine)
+            {
+                throw new ArgumentException(
+                    $"A line of the comment is longer than the {LongestLine} bytes that the format allows. Break it.",
+                    nameof(comment));
+            }
         }
     }
 }

@@ -11,10 +11,12 @@ public sealed partial class SparsePattern
     /// The row starts do not begin with 0, do not end with the number of entries or descend; or the columns of a row
     /// do not ascend or lie outside the matrix.
     /// </exception>
+    /// <exception cref="SizeLimitException">There are more columns than a matrix can have.</exception>
     public static SparsePattern FromCompressedRows(
         int columnCount, ReadOnlySpan<int> rowStarts, ReadOnlySpan<int> columns)
     {
         ArgumentOutOfRangeException.ThrowIfNegative(columnCount);
+        SizeLimitException.CheckLines(columnCount);
         if (rowStarts.IsEmpty || rowStarts[0] != 0 || rowStarts[^1] != columns.Length)
         {
             throw new ArgumentException(
