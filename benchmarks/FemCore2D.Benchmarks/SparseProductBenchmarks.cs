@@ -31,12 +31,12 @@ public class SparseProductBenchmarks
     public void Prepare()
     {
         matrix = Laplacian(Side);
-        foreignMatrix = matrix.ToMathNet();
+        foreignMatrix = matrix.ToMathNetSparse();
         Random random = new(1);
         x = Enumerable.Range(0, matrix.RowCount).Select(_ => random.NextDouble() - 0.5).ToArray();
         y = new double[x.Length];
-        foreignX = MathNetBridge.ToMathNet<double>(x);
-        foreignY = MathNetBridge.ToMathNet<double>(y);
+        foreignX = LinearAlgebra.Vector<double>.Build.Dense(x.ToArray());
+        foreignY = LinearAlgebra.Vector<double>.Build.Dense(y.ToArray());
         plain = new ConjugateGradients<double>(matrix);
         preconditioned = new ConjugateGradients<double>(matrix, new IncompleteCholesky<double>(matrix));
     }
