@@ -8,7 +8,7 @@ using Indexed = MathNet.Numerics.LinearAlgebra.Double.SparseMatrix;
 namespace FemCore2D.Benchmarks;
 
 /// <summary>The stiffness matrix of degree 1 on 2 million triangles, against an indexed builder and against memory.</summary>
-[SimpleJob(RunStrategy.Monitoring, warmupCount: 1, iterationCount: 5)]
+[SimpleJob(RunStrategy.Monitoring, warmupCount: 6, iterationCount: 9)]
 public class AssemblyBenchmarks
 {
     private Mesh mesh = null!;

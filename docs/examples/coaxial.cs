@@ -26,4 +26,4 @@ Console.WriteLine($"largest field in the sleeve: {field.LargestField("sleeve").M
 
 CellScalar potential = CellScalar.Of(field.Potential);
 new Figure(new BandLayer(potential) { Label = "Potential", Unit = "V" }, new LevelLineLayer(potential))
-    .SavePng("coaxial.png");
+    .SavePng(Path.Combine(Directory.CreateDirectory("output").FullName, "coaxial.png"));

@@ -45,7 +45,7 @@ Results Compute(ProgressContext context)
         .WithRegionSize("insulation L2", 0.6e-3)
         .WithRegionSize("insulation L3", 0.6e-3)
         .WithRegionSize("pair insulation", 0.3e-3);
-    MeshingResult made = Mesher.Generate(section, options);
+    MeshingResult made = Mesher.Generate(section, options, new Build(meshing));
     meshing.Value = meshing.MaxValue;
 
     ElectrostaticProblem insulators = new ElectrostaticProblem(made.Mesh, degree: 2)
@@ -184,6 +184,16 @@ internal sealed record Results(MeshingResult Meshing, CapacitanceMatrix Capacita
             double b = Capacitances.Maxwell("wire b", "wire b") - direct;
             return direct + (a * b / (a + b));
         }
+    }
+}
+
+// Turns the cells made so far into a bar.
+internal sealed class Build(ProgressTask task) : IProgress<MeshingProgress>
+{
+    public void Report(MeshingProgress value)
+    {
+        double done = value.EstimatedCells > 0 ? Math.Min(value.Cells / value.EstimatedCells, 1) : 0;
+        task.Value = Math.Max(task.Value, 0.9 * done * task.MaxValue);
     }
 }
 

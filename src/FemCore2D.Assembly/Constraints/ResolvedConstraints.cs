@@ -184,7 +184,8 @@ public sealed class ResolvedConstraints<T>
 
     /// <summary>
     /// The total that a condition contributes, such as a charge, a heat flow or a current: the sum of the residual over
-    /// its target. A node that two targets share counts with the one named first.
+    /// its target. A node that two targets share counts with one of them: a floating one before a fixed value, a fixed
+    /// value before a function of place, otherwise the one named first.
     /// </summary>
     /// <param name="name">The boundary, region or point with a fixed or floating value.</param>
     /// <param name="residual">The residual of the solution.</param>
@@ -228,35 +229,34 @@ public sealed class ResolvedConstraints<T>
 
     /// <summary>
     /// Finds an unknown in a part of the mesh in which no value is fixed, so that a problem without a mass term has no
-    /// unique solution there.
+    /// unique solution there. A part that is tied to itself with a factor other than 1 counts as fixed.
     /// </summary>
     /// <param name="takesPart">Whether a cell takes part in the problem; all do when it is left out.</param>
+    /// <param name="heldBoundaries">Boundaries that hold the field in another way, such as by a boundary mass.</param>
     /// <returns>An unknown in such a part, or -1 when there is none.</returns>
-    public int FindUnfixed(Func<int, bool>? takesPart = null)
+    /// <exception cref="UnknownNameException">The mesh has no such boundary.</exception>
+    public int FindUnfixed(Func<int, bool>? takesPart = null, params IEnumerable<string> heldBoundaries)
     {
-        // The fixed unknowns form the group behind the last free one.
-        int ground = FreeCount;
-        int[] parents = [.. Enumerable.Range(0, FreeCount + 1)];
+        ArgumentNullException.ThrowIfNull(heldBoundaries);
+        UnfixedSearch<T> search = new(rows);
         Span<int> unknowns = stackalloc int[32];
         for (int cell = 0; cell < Space.Mesh.CellCount; cell++)
         {
-            if (takesPart is not null && !takesPart(cell))
+            if (takesPart is null || takesPart(cell))
             {
-                continue;
-            }
-
-            int count = Space.Numbering.CellUnknowns(cell, unknowns);
-            int first = Root(Group(unknowns[0]));
-            for (int i = 1; i < count; i++)
-            {
-                int other = Root(Group(unknowns[i]));
-                if (other != first)
+                int count = Space.Numbering.CellUnknowns(cell, unknowns);
+                for (int i = 1; i < count; i++)
                 {
-                    // The ground stays root of its group.
-                    (int child, int root) = other == ground ? (first, other) : (other, first);
-                    parents[child] = root;
-                    first = root;
+                    search.Join(unknowns[i], unknowns[0], T.One);
                 }
+            }
+        }
+
+        foreach (string boundary in heldBoundaries)
+        {
+            foreach (int unknown in Space.Numbering.UnknownsOfBoundary(boundary))
+            {
+                search.Hold(unknown);
             }
         }
 
@@ -265,7 +265,7 @@ public sealed class ResolvedConstraints<T>
             if (takesPart is null || takesPart(cell))
             {
                 Space.Numbering.CellUnknowns(cell, unknowns);
-                if (Root(Group(unknowns[0])) != ground)
+                if (!search.IsFixed(unknowns[0]))
                 {
                     return unknowns[0];
                 }
@@ -273,19 +273,6 @@ public sealed class ResolvedConstraints<T>
         }
 
         return -1;
-
-        int Group(int unknown) => rows.Columns[unknown] < 0 ? ground : rows.Columns[unknown];
-
-        int Root(int group)
-        {
-            while (parents[group] != group)
-            {
-                parents[group] = parents[parents[group]];
-                group = parents[group];
-            }
-
-            return group;
-        }
     }
 
     private T SumOverMembers(ReadOnlySpan<int> members, ReadOnlySpan<T> residual)

@@ -53,6 +53,7 @@ public sealed partial class ElectrostaticProblem
             SpaceCharges = [],
             SurfaceCharges = [],
             Potentials = [.. setup.Potentials.Select(potential => potential with { Function = _ => 0 })],
+            Layers = [.. setup.Layers.Select(layer => layer with { Potential = 0 })],
             Conductors = [.. setup.Conductors.Select(conductor => conductor with { Value = 0 })],
         };
         ElectrostaticSystem system = new(grounded, driven.Length, settings ?? new(), progress, cancellationToken);
@@ -71,6 +72,8 @@ public sealed partial class ElectrostaticProblem
     /// <exception cref="InvalidOperationException">The section is axisymmetric, so it is no line.</exception>
     /// <exception cref="UnknownNameException">The name is not that of a conductor with a given potential.</exception>
     /// <exception cref="IllPosedProblemException">A region has no material, no potential is fixed, or all is conductor.</exception>
+    /// <exception cref="ConflictingConditionsException">Conditions contradict each other where they meet.</exception>
+    /// <exception cref="UnmatchedBoundariesException">Paired boundaries do not match.</exception>
     /// <exception cref="NotConvergedException">The iterations did not reach the tolerance.</exception>
     /// <exception cref="OperationCanceledException">The work was stopped.</exception>
     public LineParameters SolveLine(
@@ -86,7 +89,7 @@ public sealed partial class ElectrostaticProblem
         }
 
         double capacitance = CapacitanceOf(this);
-        bool isVacuum = setup.Dielectrics.Values.All(permittivity => ReferenceEquals(permittivity, Permittivity.Vacuum));
+        bool isVacuum = setup.Dielectrics.Values.All(permittivity => permittivity.IsVacuum);
         ElectrostaticProblem empty = new(setup with
         {
             Dielectrics = setup.Dielectrics.ToImmutableSortedDictionary(pair => pair.Key, _ => Permittivity.Vacuum),

@@ -153,6 +153,32 @@ public sealed partial class ElectrostaticProblem
     }
 
     /// <summary>
+    /// Covers a boundary with a dielectric layer too thin to mesh, behind which lies a conductor at a given potential: a
+    /// Robin condition. Neither the layer's energy nor the charge of that conductor is counted.
+    /// </summary>
+    /// <param name="boundary">The boundary.</param>
+    /// <param name="capacitancePerArea">The capacitance of the layer, its permittivity over its thickness, in F/m².</param>
+    /// <param name="potential">The potential of the conductor behind it, in V.</param>
+    /// <exception cref="UnknownNameException">The mesh has no such boundary.</exception>
+    /// <exception cref="ArgumentOutOfRangeException">The capacitance is not positive and finite, or the potential is not finite.</exception>
+    /// <exception cref="ConflictingConditionsException">The boundary has a condition already.</exception>
+    public ElectrostaticProblem WithThinLayer(string boundary, double capacitancePerArea, double potential = 0)
+    {
+        _ = Mesh.BoundaryEdges(boundary);
+        if (!(capacitancePerArea > 0))
+        {
+            throw new ArgumentOutOfRangeException(
+                nameof(capacitancePerArea), capacitancePerArea, "A layer has a positive, finite capacitance per area.");
+        }
+
+        RefuseConductor(boundary, "cannot be covered by a layer");
+        RefuseCondition(boundary);
+        ThinLayer layer = new(
+            boundary, Finite(capacitancePerArea, nameof(capacitancePerArea)), Finite(potential, nameof(potential)));
+        return new(setup with { Layers = setup.Layers.Add(layer) });
+    }
+
+    /// <summary>
     /// Makes the section one cell of a periodic row: the potential on one boundary is that on its partner.
     /// </summary>
     /// <param name="boundary">The first boundary.</param>
@@ -275,6 +301,12 @@ public sealed partial class ElectrostaticProblem
         {
             throw new ConflictingConditionsException(
                 $"The boundary '{boundary}' has a potential along it already. Give it one condition only.");
+        }
+
+        if (setup.Layers.Any(layer => layer.Boundary == boundary))
+        {
+            throw new ConflictingConditionsException(
+                $"The boundary '{boundary}' is covered by a thin layer already. Give it one condition only.");
         }
 
         if (setup.Pairs.Any(pair => pair.Boundary == boundary || pair.Partner == boundary))

@@ -19,6 +19,8 @@ internal sealed record ElectrostaticSetup(Mesh Mesh, int Degree, CoordinateSyste
 
     public ImmutableArray<PairedBoundaries> Pairs { get; init; } = [];
 
+    public ImmutableArray<ThinLayer> Layers { get; init; } = [];
+
     /// <summary>For each region of the mesh, whether it is a conductor.</summary>
     public bool[] ConductingRegions()
     {
@@ -56,3 +58,6 @@ internal readonly record struct PrescribedPotential(string Boundary, Func<Point2
 
 /// <summary>Two boundaries with the same potentials, or with opposite ones.</summary>
 internal readonly record struct PairedBoundaries(string Boundary, string Partner, bool Opposite);
+
+/// <summary>A layer too thin to mesh, with a conductor behind it: a Robin condition.</summary>
+internal readonly record struct ThinLayer(string Boundary, double CapacitancePerArea, double Potential);

@@ -44,8 +44,8 @@ public sealed class ElectrostaticSolution
     /// </summary>
     /// <remarks>
     /// The flux density is averaged at the nodes of each region and compared with the one computed (Zienkiewicz and
-    /// Zhu 1987). An estimate, not a bound: it is asymptotically right for smooth fields, and low near edges where
-    /// the field is singular. Computed at first use.
+    /// Zhu 1987). An indication, not a bound: near the true error where degree 1 meets a smooth field, of its order of
+    /// magnitude for higher degrees, and low near edges where the field is singular. Computed at first use.
     /// </remarks>
     public double EstimatedRelativeFieldError => relativeError.Value;
 
@@ -109,17 +109,10 @@ public sealed class ElectrostaticSolution
     /// <exception cref="UnknownNameException">The mesh has no such region.</exception>
     public FieldPeak LargestField(string region)
     {
-        int index = setup.Mesh.RegionIndex(region);
         double largest = -1;
         (int Cell, Point2D Reference, FieldVector<double> Gradient) where = default;
-        ReadOnlySpan<int> regions = setup.Mesh.CellRegions;
-        for (int cell = 0; cell < regions.Length; cell++)
+        foreach (int cell in setup.Mesh.CellsIn(region))
         {
-            if (regions[cell] != index)
-            {
-                continue;
-            }
-
             foreach (Point2D node in Potential.Space.ElementOn(setup.Mesh.KindOf(cell)).NodePoints)
             {
                 FieldVector<double> gradient = Potential.GradientIn(cell, node);

@@ -11,6 +11,9 @@ internal sealed class ElectrostaticSystem
     private readonly ElectrostaticSetup setup;
     private readonly NodeSpace space;
     private readonly SparseMatrix<double> matrix;
+
+    /// <summary>The matrix without thin layers, whose quadratic form is the energy of the field.</summary>
+    private readonly SparseMatrix<double> fieldMatrix;
     private readonly double[] charges;
     private readonly SparseMatrix<double> reduced;
     private readonly SymmetricSolver solver;
@@ -31,6 +34,7 @@ internal sealed class ElectrostaticSystem
         space = new NodeSpace(setup.Mesh, setup.Degree);
         Constraints = ConstraintsOf(setup, space);
         RefuseFloatingPotential(permittivities);
+        RefuseChargeOnConductors();
 
         Assembler assembler = new(space);
         matrix = assembler.CreateMatrix<double>();
@@ -39,6 +43,13 @@ internal sealed class ElectrostaticSystem
             new TensorStiffness<double, PermittivityCoefficient>(new(permittivities, setup.Coordinates)),
             cancellationToken: cancellationToken);
         charges = ChargesOf(assembler, cancellationToken);
+        fieldMatrix = matrix;
+        if (!setup.Layers.IsEmpty)
+        {
+            matrix = matrix.Copy();
+            AddLayers(assembler);
+        }
+
         reduced = Constraints.Reduce(matrix);
         assemblyTime = clock.Elapsed;
         solver = new SymmetricSolver(reduced, rightHandSides, settings, progress);
@@ -58,7 +69,7 @@ internal sealed class ElectrostaticSystem
                 Constraints.ValueOf(conductor.Name, free),
                 conductor.Floats ? conductor.Value : Constraints.Reaction(conductor.Name, residual)));
         double energy = 0;
-        double[] product = matrix.Multiply(all);
+        double[] product = fieldMatrix.Multiply(all);
         for (int i = 0; i < all.Length; i++)
         {
             energy += 0.5 * all[i] * product[i];
@@ -164,13 +175,50 @@ internal sealed class ElectrostaticSystem
 
     private void RefuseFloatingPotential(Permittivity?[] permittivities)
     {
-        int unfixed = Constraints.FindUnfixed(cell => permittivities[setup.Mesh.CellRegions[cell]] is not null);
+        int unfixed = Constraints.FindUnfixed(
+            cell => permittivities[setup.Mesh.CellRegions[cell]] is not null,
+            setup.Layers.Select(layer => layer.Boundary));
         if (unfixed >= 0)
         {
             throw new IllPosedProblemException(
                 $"No potential is fixed in the part of the section around {space.NodePlaces[unfixed]}, so the potential "
                 + "there is known only up to a constant. Give a conductor or boundary of that part a potential.");
         }
+    }
+
+    private void AddLayers(Assembler assembler)
+    {
+        foreach (ThinLayer layer in setup.Layers)
+        {
+            LayerCoefficient capacitance = new(layer.CapacitancePerArea, setup.Coordinates);
+            assembler.AddOnBoundary<double, BoundaryMass<double, LayerCoefficient>>(
+                matrix, new(capacitance), layer.Boundary);
+            LayerCoefficient charge = new(layer.CapacitancePerArea * layer.Potential, setup.Coordinates);
+            assembler.AddOnBoundary<double, BoundaryFlux<double, LayerCoefficient>>(
+                charges, new(charge), layer.Boundary);
+        }
+    }
+
+    /// <exception cref="ConflictingConditionsException">A charged boundary runs along a conductor.</exception>
+    private void RefuseChargeOnConductors()
+    {
+        bool[] conducting = setup.ConductingRegions();
+        foreach (ChargeDensity charge in setup.SurfaceCharges)
+        {
+            foreach (int edge in setup.Mesh.BoundaryEdges(charge.Name))
+            {
+                (int left, int right) = setup.Mesh.CellsOf(edge);
+                if (IsConductor(left) || IsConductor(right))
+                {
+                    throw new ConflictingConditionsException(
+                        $"The charged boundary '{charge.Name}' runs along a conductor at "
+                        + $"{setup.Mesh.PointOnEdge(edge, 0.5)}, which takes the charge that its potential demands. Make "
+                        + "it a floating conductor with that total charge instead.");
+                }
+            }
+        }
+
+        bool IsConductor(int cell) => cell >= 0 && conducting[setup.Mesh.CellRegions[cell]];
     }
 
     private double[] ChargesOf(Assembler assembler, CancellationToken cancellationToken)

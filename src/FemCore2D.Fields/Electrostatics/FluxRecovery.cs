@@ -23,8 +23,8 @@ internal static class FluxRecovery
         {
             if (!conducting[region])
             {
-                Permittivity permittivity = setup.Dielectrics[setup.Mesh.RegionNames[region]];
-                AddRegion(setup, potential, region, permittivity, ref error, ref energy);
+                string name = setup.Mesh.RegionNames[region];
+                AddRegion(setup, potential, name, setup.Dielectrics[name], ref error, ref energy);
             }
         }
 
@@ -34,7 +34,7 @@ internal static class FluxRecovery
     private static void AddRegion(
         ElectrostaticSetup setup,
         NodeField<double> potential,
-        int region,
+        string region,
         Permittivity permittivity,
         ref double error,
         ref double energy)
@@ -43,14 +43,8 @@ internal static class FluxRecovery
         Vector2D[] averages = Averages(potential, region, permittivity);
         Span<int> unknowns = stackalloc int[MostNodes];
         Span<double> shapes = stackalloc double[MostNodes];
-        ReadOnlySpan<int> regions = setup.Mesh.CellRegions;
-        for (int cell = 0; cell < regions.Length; cell++)
+        foreach (int cell in setup.Mesh.CellsIn(region))
         {
-            if (regions[cell] != region)
-            {
-                continue;
-            }
-
             CellKind kind = setup.Mesh.KindOf(cell);
             INodeElement element = space.ElementOn(kind);
             var rule = QuadratureRule.For(kind, 2 * space.Degree);
@@ -76,20 +70,14 @@ internal static class FluxRecovery
         }
     }
 
-    private static Vector2D[] Averages(NodeField<double> potential, int region, Permittivity permittivity)
+    private static Vector2D[] Averages(NodeField<double> potential, string region, Permittivity permittivity)
     {
         NodeSpace space = potential.Space;
         Vector2D[] sums = new Vector2D[space.UnknownCount];
         int[] counts = new int[space.UnknownCount];
         Span<int> unknowns = stackalloc int[MostNodes];
-        ReadOnlySpan<int> regions = space.Mesh.CellRegions;
-        for (int cell = 0; cell < regions.Length; cell++)
+        foreach (int cell in space.Mesh.CellsIn(region))
         {
-            if (regions[cell] != region)
-            {
-                continue;
-            }
-
             ReadOnlySpan<Point2D> nodes = space.ElementOn(space.Mesh.KindOf(cell)).NodePoints;
             space.Numbering.CellUnknowns(cell, unknowns);
             for (int i = 0; i < nodes.Length; i++)

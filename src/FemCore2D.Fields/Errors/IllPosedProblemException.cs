@@ -3,8 +3,8 @@ using FemCore2D.Geometry;
 namespace FemCore2D.Fields;
 
 /// <summary>
-/// A problem has no solution or more than one as it is described: a region without material, a potential fixed
-/// nowhere, nothing that drives a field.
+/// A problem has no solution or more than one as it is described: a region without material, a material or source that
+/// makes no sense, a potential fixed nowhere, nothing but conductors.
 /// </summary>
 public sealed class IllPosedProblemException : FemCoreException
 {

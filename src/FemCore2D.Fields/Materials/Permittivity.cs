@@ -21,6 +21,9 @@ public sealed class Permittivity
     /// <summary>Whether it is the same everywhere in its region.</summary>
     public bool IsConstant => function is null;
 
+    /// <summary>Whether it is that of vacuum.</summary>
+    internal bool IsVacuum => IsConstant && constant == new Tensor2D<double>(1, 0, 0, 1);
+
     /// <summary>A dielectric that is the same in all directions.</summary>
     /// <param name="relative">The relative permittivity, positive.</param>
     /// <exception cref="ArgumentOutOfRangeException">The number is not positive and finite.</exception>
@@ -40,8 +43,12 @@ public sealed class Permittivity
     /// <exception cref="ArgumentException">The tensor is not symmetric and positive definite.</exception>
     public static Permittivity Anisotropic(Tensor2D<double> relative)
     {
-        Check(relative, string.Empty);
-        return new Permittivity(relative);
+        return IsPositiveDefinite(relative)
+            ? new Permittivity(relative)
+            : throw new ArgumentException(
+                $"The relative permittivity {Describe(relative)} is not symmetric and positive definite. "
+                + "Give finite principal values above zero.",
+                nameof(relative));
     }
 
     /// <summary>A dielectric with two principal axes.</summary>
@@ -81,7 +88,7 @@ public sealed class Permittivity
     }
 
     /// <summary>The relative permittivity at a point.</summary>
-    /// <exception cref="ArgumentException">A function of place gave a tensor that is not symmetric and positive definite.</exception>
+    /// <exception cref="IllPosedProblemException">A function of place gave a tensor that is not symmetric and positive definite.</exception>
     public Tensor2D<double> At(Point2D place)
     {
         if (function is null)
@@ -90,20 +97,20 @@ public sealed class Permittivity
         }
 
         Tensor2D<double> value = function(place);
-        Check(value, $" at {place}");
-        return value;
+        return IsPositiveDefinite(value)
+            ? value
+            : throw new IllPosedProblemException(
+                $"The function for a relative permittivity gives {Describe(value)} at {place}, which is not symmetric and "
+                + "positive definite. Give finite principal values above zero all over the region.");
     }
 
-    private static void Check(Tensor2D<double> relative, string where)
+    private static bool IsPositiveDefinite(Tensor2D<double> relative)
     {
         double determinant = (relative.XX * relative.YY) - (relative.XY * relative.YX);
         bool symmetric = Math.Abs(relative.XY - relative.YX) <= 1e-12 * (Math.Abs(relative.XX) + Math.Abs(relative.YY));
-        if (!(symmetric && relative.XX > 0 && determinant > 0 && double.IsFinite(relative.XX + relative.YY)))
-        {
-            throw new ArgumentException(
-                $"The relative permittivity{where} is ({relative.XX}, {relative.XY}; {relative.YX}, {relative.YY}), "
-                + "which is not symmetric and positive definite. Give finite principal values above zero.",
-                nameof(relative));
-        }
+        return symmetric && relative.XX > 0 && determinant > 0 && double.IsFinite(relative.XX + relative.YY);
     }
+
+    private static string Describe(Tensor2D<double> relative) =>
+        $"({relative.XX}, {relative.XY}; {relative.YX}, {relative.YY})";
 }

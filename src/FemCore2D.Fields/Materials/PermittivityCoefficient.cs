@@ -68,6 +68,14 @@ internal readonly struct ChargeCoefficient(
     }
 }
 
+/// <summary>A constant; in axisymmetric sections times the circumference at each point.</summary>
+internal readonly struct LayerCoefficient(double value, CoordinateSystem coordinates) : ICoefficient<double>
+{
+    public int DegreeIn(int region) => coordinates == CoordinateSystem.Axisymmetric ? 1 : 0;
+
+    public double At(in CellPoint point) => value * Measure.At(point.Place, coordinates);
+}
+
 /// <summary>What a point of a section stands for in the third dimension.</summary>
 internal static class Measure
 {

@@ -11,10 +11,14 @@ namespace FemCore2D.Fields;
 /// </remarks>
 public sealed class LineParameters
 {
-    internal LineParameters(double capacitance, double vacuumCapacitance)
+    /// <summary>Derives a line from its two capacitances, such as those between the wires of a pair.</summary>
+    /// <param name="capacitancePerMetre">The capacitance, in F/m.</param>
+    /// <param name="vacuumCapacitancePerMetre">The capacitance with vacuum in place of all dielectrics, in F/m.</param>
+    /// <exception cref="ArgumentOutOfRangeException">A capacitance is not positive and finite.</exception>
+    public LineParameters(double capacitancePerMetre, double vacuumCapacitancePerMetre)
     {
-        CapacitancePerMetre = capacitance;
-        VacuumCapacitancePerMetre = vacuumCapacitance;
+        CapacitancePerMetre = Positive(capacitancePerMetre, nameof(capacitancePerMetre));
+        VacuumCapacitancePerMetre = Positive(vacuumCapacitancePerMetre, nameof(vacuumCapacitancePerMetre));
     }
 
     /// <summary>The capacitance, in F/m.</summary>
@@ -40,4 +44,8 @@ public sealed class LineParameters
     public override string ToString() => string.Create(
         null,
         $"Z0 {CharacteristicImpedance:G6} ohm, velocity {Velocity:G6} m/s, C {1e12 * CapacitancePerMetre:G6} pF/m, L {1e9 * InductancePerMetre:G6} nH/m");
+
+    private static double Positive(double capacitance, string name) => capacitance > 0 && double.IsFinite(capacitance)
+        ? capacitance
+        : throw new ArgumentOutOfRangeException(name, capacitance, "A capacitance is a positive, finite number.");
 }

@@ -10,6 +10,9 @@ namespace FemCore2D.Fields;
 /// </summary>
 internal sealed class SymmetricSolver
 {
+    /// <summary>What a factorization may leave over before its solution counts as wrong.</summary>
+    private const double LargestResidual = 1e-6;
+
     private readonly SparseMatrix<double> matrix;
     private readonly SolveSettings settings;
     private readonly IProgress<SolveProgress>? progress;
@@ -59,7 +62,7 @@ internal sealed class SymmetricSolver
             {
                 factorization ??= settings.Factorizer.Factorize(matrix, cancellationToken);
                 factorization.Solve(rightHandSide, solution);
-                RelativeResidual = Math.Max(RelativeResidual, ResidualOf(rightHandSide, solution));
+                RelativeResidual = Math.Max(RelativeResidual, CheckedResidual(rightHandSide, solution));
             }
         }
         finally
@@ -73,7 +76,7 @@ internal sealed class SymmetricSolver
 
     private void Iterate(ReadOnlySpan<double> rightHandSide, double[] solution, CancellationToken cancellationToken)
     {
-        iterations ??= new ConjugateGradients<double>(matrix, new IncompleteCholesky<double>(matrix));
+        iterations ??= new ConjugateGradients<double>(matrix, new IncompleteCholesky<double>(matrix, cancellationToken: cancellationToken));
         IterationOptions options = new()
         {
             RelativeTolerance = settings.RelativeTolerance,
@@ -84,6 +87,17 @@ internal sealed class SymmetricSolver
         report.EnsureConverged();
         Iterations += report.Iterations;
         RelativeResidual = Math.Max(RelativeResidual, report.RelativeResidual);
+    }
+
+    /// <exception cref="IllPosedProblemException">The factorization did not solve the system.</exception>
+    private double CheckedResidual(ReadOnlySpan<double> rightHandSide, double[] solution)
+    {
+        double residual = ResidualOf(rightHandSide, solution);
+        return residual <= LargestResidual
+            ? residual
+            : throw new IllPosedProblemException(
+                $"{Name} left a relative residual of {residual:G2}, so its solution is of no use. Check that it takes "
+                + "symmetric positive definite matrices, or leave it out.");
     }
 
     private double ResidualOf(ReadOnlySpan<double> rightHandSide, double[] solution)

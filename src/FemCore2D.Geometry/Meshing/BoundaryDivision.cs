@@ -25,10 +25,10 @@ internal sealed class BoundaryDivision
             int leader = plan.Rings.Of(piece).Min();
             fractions[piece] = leader < piece ? [.. fractions[leader]] : Divide(piece);
             edges += fractions[piece].Count - 1;
-            if (edges > plan.Options.CellLimit)
+            if (edges > plan.CellLimit)
             {
                 throw new MeshingException(string.Create(CultureInfo.InvariantCulture,
-                    $"The boundaries alone need more edges than the limit of {plan.Options.CellLimit} cells; the size on {plan.Describe(piece)} is {plan.PieceSizes[piece]:G4} m. Ask for larger sizes or raise the limit of cells."));
+                    $"The boundaries alone need more edges than the limit of {plan.CellLimit} cells; the size on {plan.Describe(piece)} is {plan.PieceSizes[piece]:G4} m. Ask for larger sizes or raise the limit of cells."));
             }
         }
 
@@ -88,11 +88,11 @@ internal sealed class BoundaryDivision
             places.Add(place);
             isUniform &= Math.Abs(sizeThere - size) <= 1e-12 * size;
             size = sizeThere;
-            if (counts[^1] > plan.Options.CellLimit)
+            if (counts[^1] > plan.CellLimit)
                 break;
         }
 
-        edges = Math.Max(fewest, (int)Math.Ceiling(Math.Min(counts[^1], plan.Options.CellLimit) - 0.1));
+        edges = Math.Max(fewest, (int)Math.Ceiling(Math.Min(counts[^1], plan.CellLimit) - 0.1));
         List<double> cuts = [0];
         for (int i = 1, k = 1; i < edges; i++)
         {

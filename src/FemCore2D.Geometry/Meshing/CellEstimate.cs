@@ -31,7 +31,7 @@ internal static class CellEstimate
                 0);
             cells[region] += part;
             total += part;
-            if (total > plan.Options.CellLimit)
+            if (total > plan.CellLimit)
             {
                 int worst = Array.IndexOf(cells, cells.Max());
                 throw TooMany(plan, worst, plan.RegionCaps[worst], total);
@@ -43,7 +43,7 @@ internal static class CellEstimate
 
     public static MeshingException TooMany(MeshPlan plan, int region, double size, double cells) =>
         new(string.Create(CultureInfo.InvariantCulture,
-            $"The sizes need about {cells:G3} cells or more, above the limit of {plan.Options.CellLimit}, most of them in region '{plan.Arrangement.RegionNames[region]}' with sizes of up to {size:G4} m. Ask for larger sizes there and at its boundaries, let sizes grow faster, or raise the limit of cells."));
+            $"The sizes need about {cells:G3} cells or more, above the limit of {plan.CellLimit}, most of them in region '{plan.Arrangement.RegionNames[region]}' with sizes of up to {size:G4} m. Ask for larger sizes there and at its boundaries, let sizes grow faster, or raise the limit of cells."));
 
     private static double Integrate(Point2D a, Point2D b, Point2D c, SizeField field, double cap, int depth)
     {

@@ -140,16 +140,21 @@ public sealed class MeshOptions
     /// </summary>
     /// <param name="first">The name of a boundary.</param>
     /// <param name="second">The name of the other.</param>
+    /// <exception cref="ArgumentException">A name is empty, both are the same, or the two are paired already.</exception>
     public MeshOptions WithPair(string first, string second)
     {
         Named(first);
         Named(second);
         return first == second
             ? throw new ArgumentException($"The boundary '{first}' cannot be paired with itself; name two boundaries.", nameof(second))
-            : new(this) { Pairs = Pairs.Add((first, second)) };
+            : Pairs.Contains((first, second)) || Pairs.Contains((second, first))
+                ? throw new ArgumentException($"The boundaries '{first}' and '{second}' are paired already.", nameof(second))
+                : new(this) { Pairs = Pairs.Add((first, second)) };
     }
 
-    /// <summary>Sets the number of cells that must not be exceeded.</summary>
+    /// <summary>
+    /// Sets the number of cells that must not be exceeded. Where the machine's memory holds fewer, that number counts.
+    /// </summary>
     /// <param name="cells">The number of cells, at least 1.</param>
     /// <exception cref="ArgumentOutOfRangeException">The number is not within 1 and 200 million.</exception>
     public MeshOptions WithCellLimit(int cells)

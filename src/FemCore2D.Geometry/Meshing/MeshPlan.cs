@@ -6,6 +6,9 @@ namespace FemCore2D.Geometry;
 /// <summary>The options of a mesh resolved for the pieces and regions of one arrangement.</summary>
 internal sealed class MeshPlan
 {
+    /// <summary>What a cell takes while it is made, with its share of vertices and edges; measured, and rounded up.</summary>
+    private const int BytesPerCell = 250;
+
     private const double DefaultCellsAcross = 30;
     private const double FinestOverTolerance = 16;
 
@@ -13,6 +16,8 @@ internal sealed class MeshPlan
     {
         Arrangement = arrangement;
         Options = options;
+        CellLimit = (int)Math.Min(
+            options.CellLimit, GC.GetGCMemoryInfo().TotalAvailableMemoryBytes / BytesPerCell);
         (Low, High) = BoxOf(arrangement);
         Extent = Math.Max(High.X - Low.X, High.Y - Low.Y);
         Curves = [.. arrangement.Pieces.Select(piece =>
@@ -26,6 +31,9 @@ internal sealed class MeshPlan
     public Arrangement Arrangement { get; }
 
     public MeshOptions Options { get; }
+
+    /// <summary>The limit of the options, or what the memory holds when that is less.</summary>
+    public int CellLimit { get; }
 
     public Point2D Low { get; }
 
@@ -114,18 +122,24 @@ internal sealed class MeshPlan
             if (arranged.RightRegion >= 0)
                 areas[arranged.RightRegion] -= area;
 
+            if (Divisions[piece] > CellLimit)
+            {
+                throw new MeshingException(
+                    $"A division into {Divisions[piece]} edges of {Describe(piece)} is more than the limit of {CellLimit} cells. Ask for fewer edges or raise the limit of cells.");
+            }
+
             double edges = curve.Length / PieceSizes[piece];
-            if (Divisions[piece] == 0 && edges > Options.CellLimit)
+            if (Divisions[piece] == 0 && edges > CellLimit)
             {
                 throw new MeshingException(string.Create(CultureInfo.InvariantCulture,
-                    $"An edge length of {PieceSizes[piece]:G4} m on {Describe(piece)} needs about {edges:G3} edges, more than the limit of {Options.CellLimit} cells. Ask for larger sizes there or raise the limit of cells."));
+                    $"An edge length of {PieceSizes[piece]:G4} m on {Describe(piece)} needs about {edges:G3} edges, more than the limit of {CellLimit} cells. Ask for larger sizes there or raise the limit of cells."));
             }
         }
 
         for (int region = 0; region < areas.Length; region++)
         {
             double cells = areas[region] / CellEstimate.AreaOfCell(RegionCaps[region]);
-            if (cells > Options.CellLimit)
+            if (cells > CellLimit)
                 throw CellEstimate.TooMany(this, region, RegionCaps[region], cells);
         }
     }

@@ -54,7 +54,7 @@ public static class Mesher
         Triangulation triangulation = BoundaryTriangulation.Make(
             plan, division, Scaffold.Make(plan, field, cancellation), cancellation);
         double estimate = CellEstimate.Check(triangulation, plan, field, cancellation);
-        triangulation.Reserve((int)Math.Min(estimate * 0.6, plan.Options.CellLimit) + triangulation.VertexCount);
+        triangulation.Reserve((int)Math.Min(estimate * 0.6, plan.CellLimit) + triangulation.VertexCount);
 
         Refiner refiner = new(plan, field, triangulation, division, estimate, progress, cancellation);
         refiner.Refine();

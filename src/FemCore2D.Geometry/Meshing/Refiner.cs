@@ -122,10 +122,10 @@ internal sealed unsafe partial class Refiner
     {
         cancellation.ThrowIfCancellationRequested();
         progress?.Report(new MeshingProgress(MeshingStage.Refining, mesh.TriangleCount, estimatedCells));
-        if (mesh.TriangleCount > 2L * plan.Options.CellLimit)
+        if (mesh.TriangleCount > 2L * plan.CellLimit)
         {
             throw new MeshingException(string.Create(CultureInfo.InvariantCulture,
-                $"The mesh has passed twice the limit of {plan.Options.CellLimit} cells, though its sizes alone need only about {estimatedCells:G3}: the section has details far finer than the sizes. Remove thin gaps and short pieces, ask for a smaller least angle, or raise the limit of cells."));
+                $"The mesh has passed twice the limit of {plan.CellLimit} cells, though its sizes alone need only about {estimatedCells:G3}: the section has details far finer than the sizes. Remove thin gaps and short pieces, ask for a smaller least angle, or raise the limit of cells."));
         }
     }
 

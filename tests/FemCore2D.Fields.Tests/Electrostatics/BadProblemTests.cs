@@ -73,6 +73,19 @@ public class BadProblemTests
     }
 
     [Fact]
+    public void AChargedRimOfAConductorIsRefused()
+    {
+        Mesh mesh = Mesher.Generate(
+            CrossSection.Empty
+                .Fill(Outline.Rectangle(Point2D.Origin, 1, 1, "plate"), "air")
+                .Fill(Outline.Circle(new Point2D(0.5, 0.5), 0.2, "rim"), "wire"),
+            MeshOptions.Default.WithSize(0.3)).Mesh;
+        var fault = Assert.Throws<ConflictingConditionsException>(() => new ElectrostaticProblem(mesh)
+            .WithDielectric("air", 1).WithConductor("plate").WithFloatingConductor("wire").WithSurfaceCharge("rim", 1e-9).Solve());
+        Assert.Contains("'rim'", fault.Message, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void ContradictingPotentialsNameThePlace()
     {
         var fault = Assert.Throws<ConflictingConditionsException>(
@@ -119,6 +132,10 @@ public class BadProblemTests
         Assert.Throws<ArgumentOutOfRangeException>(() => Air().WithFloatingConductor("top", double.NegativeInfinity));
         Assert.Throws<ArgumentOutOfRangeException>(() => Air().WithSpaceCharge("air", double.NaN));
         Assert.Throws<ArgumentOutOfRangeException>(() => new ElectrostaticProblem(Square, 0));
+        Assert.Throws<ArgumentOutOfRangeException>(() => Air().WithThinLayer("top", 0));
+        Assert.Throws<ArgumentOutOfRangeException>(() => Air().WithThinLayer("top", 1, double.NaN));
+        Assert.Throws<ArgumentOutOfRangeException>(() => new SolveSettings { RelativeTolerance = double.NaN });
+        Assert.Throws<ArgumentOutOfRangeException>(() => new SolveSettings { IterationLimit = 0 });
         Assert.Throws<ArgumentOutOfRangeException>(() => new ElectrostaticProblem(Square, 6));
         Assert.Throws<ArgumentException>(() => Air().WithConductor("top").SolveCapacitances([]));
         Assert.Throws<ArgumentException>(() => Air().WithConductor("top").SolveCapacitances(["top", "top"]));
@@ -131,6 +148,9 @@ public class BadProblemTests
         var fault = Assert.Throws<IllPosedProblemException>(
             () => Air().WithConductor("top").WithSpaceCharge("air", _ => double.NaN).Solve());
         Assert.Contains("'air' at (", fault.Message, StringComparison.Ordinal);
+        fault = Assert.Throws<IllPosedProblemException>(() => new ElectrostaticProblem(Square)
+            .WithDielectric("air", Permittivity.OfPlace(_ => -1.0)).WithConductor("top").Solve());
+        Assert.Contains("at (", fault.Message, StringComparison.Ordinal);
     }
 
     [Fact]

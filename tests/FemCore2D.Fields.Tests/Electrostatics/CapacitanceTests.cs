@@ -61,6 +61,11 @@ public class CapacitanceTests
         double plain = Problem(mesh).SolveCapacitances(["west"]).Maxwell("west", "west");
         double charged = Problem(mesh).WithSpaceCharge("air", 1e-6).SolveCapacitances(["west"]).Maxwell("west", "west");
         Assert.Equal(plain, charged);
+
+        ElectrostaticProblem floating = Sections.ThreeWiresProblem(mesh).WithConductor("west").WithConductor("east");
+        Assert.Equal(
+            floating.WithFloatingConductor("middle").SolveCapacitances(["west"]).Maxwell("west", "west"),
+            floating.WithFloatingConductor("middle", 1e-6).SolveCapacitances(["west"]).Maxwell("west", "west"));
     }
 
     [Fact]
@@ -107,6 +112,25 @@ public class CapacitanceTests
         Assert.Equal(4, line.EffectivePermittivity, 1e-8);
         Assert.Equal(
             Math.Sqrt(line.InductancePerMetre / line.CapacitancePerMetre), line.CharacteristicImpedance, 1e-6);
+    }
+
+    [Theory]
+    [InlineData(0)]
+    [InlineData(double.NaN)]
+    public void ALineHasPositiveCapacitances(double capacitance) =>
+        Assert.Throws<ArgumentOutOfRangeException>(() => new LineParameters(capacitance, 1e-12));
+
+    [Fact]
+    public void AFactorizationThatDoesNotSolveIsRefused() => Assert.Throws<IllPosedProblemException>(() =>
+        Problem(Sections.ThreeWires(0.5)).SolveCapacitances(Wires, new SolveSettings { Factorizer = new NoFactorizer() }));
+
+    private sealed class NoFactorizer : IFactorizer<double>, IFactorization<double>
+    {
+        public int Size => 0;
+
+        public IFactorization<double> Factorize(SparseMatrix<double> matrix, CancellationToken cancellationToken = default) => this;
+
+        public void Solve(ReadOnlySpan<double> rightHandSide, Span<double> solution) => solution.Fill(double.NaN);
     }
 
     /// <summary>A dense factorization such as a host might bring.</summary>

@@ -79,7 +79,7 @@ public class SolutionTests
         Assert.True(rate > degree + 1 - 0.2, $"The rate is {rate:F2} from {first:E2} to {second:E2}.");
     }
 
-    /// <summary>A permittivity with principal axes across: by stretching, the capacitance of plates is ε_yy - ε_xy²/ε_xx.</summary>
+    /// <summary>A periodic row of plates has a uniform field across, so only ε_yy of a tilted tensor counts.</summary>
     [Fact]
     public void AnisotropicPlatesFollowTheTensor()
     {
@@ -91,7 +91,6 @@ public class SolutionTests
             .WithConductor("top", 1)
             .Solve();
 
-        // A periodic row of such cells has a uniform vertical field.
         Assert.Equal(Eps0 * tilted.At(Point2D.Origin).YY, solution.ChargeOf("top"), 1e-9 * Eps0);
     }
 
@@ -204,6 +203,41 @@ public class SolutionTests
 
         Assert.Equal(full.Energy, 2 * half.Energy, 1e-6 * full.Energy);
         Assert.Equal(full.ChargeOf("wire 0"), half.ChargeOf("wire 0"), 1e-6 * half.ChargeOf("wire 0"));
+    }
+
+    /// <summary>A thin layer before an electrode is a capacitor in series (closed form).</summary>
+    [Fact]
+    public void ThinLayerIsACapacitorInSeries()
+    {
+        const double layer = 3 * Eps0;
+        ElectrostaticSolution solution = new ElectrostaticProblem(Sections.Square(), 2)
+            .WithDielectric("air", 1)
+            .WithConductor("bottom")
+            .WithThinLayer("top", layer, 8)
+            .Solve();
+
+        // One metre of air in series with the layer: 3/4 of the voltage lies across the air.
+        Assert.Equal(6, solution.PotentialAt(new Point2D(0.2, 1)), 1e-8);
+        Assert.Equal(-6 * Eps0, solution.ChargeOf("bottom"), 1e-8 * Eps0);
+        Assert.Equal(0.5 * Eps0 * 36, solution.Energy, 1e-7 * Eps0);
+
+        // The layer's conductor holds the potential, so nothing else needs to.
+        ElectrostaticSolution alone = new ElectrostaticProblem(Sections.Square())
+            .WithDielectric("air", 1).WithThinLayer("top", layer, 8).Solve();
+        Assert.Equal(8, alone.PotentialAt(new Point2D(0.5, 0.5)), 1e-7);
+    }
+
+    /// <summary>An antiperiodic part needs no fixed potential: no constant but zero is its own opposite.</summary>
+    [Fact]
+    public void AntiperiodicPartIsFixedByItself()
+    {
+        // ρ = ε0 π² cos(πx) has the antiperiodic potential cos(πx).
+        ElectrostaticSolution solution = new ElectrostaticProblem(Sections.PairedSquare(0.1), 4)
+            .WithDielectric("air", 1)
+            .WithSpaceCharge("air", p => Eps0 * Math.PI * Math.PI * Math.Cos(Math.PI * p.X))
+            .WithAntiperiodicity("left", "right")
+            .Solve();
+        Assert.Equal(Math.Cos(0.3 * Math.PI), solution.PotentialAt(new Point2D(0.3, 0.6)), 1e-5);
     }
 
     [Fact]

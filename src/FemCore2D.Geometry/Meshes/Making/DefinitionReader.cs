@@ -33,6 +33,7 @@ internal sealed class DefinitionReader
         string[] boundaries = [.. definition.Boundaries.Keys];
         CheckNames("boundary", boundaries);
         CheckNames("point", [.. definition.Points.Keys]);
+        CheckNames("region, boundary or point", [.. definition.RegionNames, .. boundaries, .. definition.Points.Keys]);
         foreach ((string name, int vertex) in definition.Points)
         {
             CheckIndex(vertex, $"Point '{name}'");
