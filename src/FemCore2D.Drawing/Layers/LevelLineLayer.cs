@@ -1,5 +1,5 @@
-using FemCore2D.Geometry;
 using System.Collections.Immutable;
+using FemCore2D.Geometry;
 using SkiaSharp;
 
 namespace FemCore2D.Drawing;

@@ -53,13 +53,13 @@ public static class SectionGenerators
     /// <remarks>None is painted over completely.</remarks>
     public static Gen<CrossSection> Overlaps() =>
         (from kinds in Gen.NonEmptyListOf(Gen.Choose(0, 3))
-        let count = Math.Min(4, kinds.Count)
-        from places in Gen.Choose(-2, 2).ArrayOf(2 * count)
-        from sizes in Gen.Choose(1, 3).ArrayOf(2 * count)
-        select Enumerable.Range(0, count).Aggregate(CrossSection.Empty, (section, i) => section.Fill(
-            OnLattice(
-                kinds[i], new Point2D(places[2 * i], places[(2 * i) + 1]), sizes[2 * i], sizes[(2 * i) + 1], $"line {i}"),
-            $"shape {i}"))).Where(IsWhollySeen);
+         let count = Math.Min(4, kinds.Count)
+         from places in Gen.Choose(-2, 2).ArrayOf(2 * count)
+         from sizes in Gen.Choose(1, 3).ArrayOf(2 * count)
+         select Enumerable.Range(0, count).Aggregate(CrossSection.Empty, (section, i) => section.Fill(
+             OnLattice(
+                 kinds[i], new Point2D(places[2 * i], places[(2 * i) + 1]), sizes[2 * i], sizes[(2 * i) + 1], $"line {i}"),
+             $"shape {i}"))).Where(IsWhollySeen);
 
     private static Gen<double> Sizes => NumberGenerators.MagnitudeBetween(1e-3, 10);
 
