@@ -148,7 +148,7 @@ internal sealed class InputCorners
             double distance = Math.Min(corner.DistanceTo(a), Math.Min(corner.DistanceTo(b), corner.DistanceTo(c)));
 
             // Between the sides of an angle the cells are as long as the gap is wide, or longer.
-            double reach = longest * Math.Clamp(90 / smallest[vertex], 4, 60);
+            double reach = longest * Math.Clamp(90 / smallest[vertex], 4, 360);
             if (distance < reach && distance < nearest)
             {
                 best = vertex;

@@ -30,7 +30,7 @@ internal sealed partial class MeshAudit
                 continue;
             double longest = Enumerable.Range(0, 3).Max(i => p[i].DistanceTo(p[(i + 1) % 3]));
             Assert.True(
-                corners.Any(corner => p.Min(corner.Place.DistanceTo) <= longest * Math.Clamp(90 / corner.Degrees, 4, 60)),
+                corners.Any(corner => p.Min(corner.Place.DistanceTo) <= longest * Math.Clamp(90 / corner.Degrees, 4, 360)),
                 $"The cell at {p[0]}, {p[1]}, {p[2]} has an angle of {smallest} degrees away from small corners.");
         }
 
