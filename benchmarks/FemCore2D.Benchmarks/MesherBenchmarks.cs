@@ -76,7 +76,7 @@ internal static class MesherSections
         .Hole(Outline.Circle(new(0, 2.6e-3), 0.5e-3, "drain"));
 
     /// <summary>The edge length that divides the section into about so many triangles.</summary>
-    public static double SizeFor(int triangles) => Radius * Math.Sqrt(Math.PI * 4 / (Math.Sqrt(3) * 0.84 * triangles));
+    public static double SizeFor(int triangles) => Radius * Math.Sqrt(Math.PI * 4 / (Math.Sqrt(3) * 1.1 * triangles));
 
     /// <summary>Fine at the wires and the drain, ten times as coarse at the screen.</summary>
     public static MeshOptions Graded(int triangles) => MeshOptions.Default
