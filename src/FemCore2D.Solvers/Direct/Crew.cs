@@ -12,7 +12,7 @@ namespace FemCore2D.Solvers;
 /// The state holds the number of the run in its upper half and the blocks not yet claimed in its lower half. A block is
 /// claimed by one compare-and-swap on both, so that a helper which comes late from an earlier run claims nothing of it.
 /// </remarks>
-internal sealed class Crew : IDisposable
+internal sealed class Crew
 {
     private readonly Helper[] helpers;
     private Work? work;
@@ -26,7 +26,7 @@ internal sealed class Crew : IDisposable
     /// <param name="threads">The largest number of threads, the leader included; 0 for one a processor.</param>
     public Crew(int threads)
     {
-        Size = threads == 0 ? Environment.ProcessorCount : threads;
+        Size = SizeOf(threads);
         helpers = new Helper[Size - 1];
         for (int i = 0; i < helpers.Length; i++)
             helpers[i] = new Helper(this, i + 1);
@@ -37,6 +37,9 @@ internal sealed class Crew : IDisposable
 
     /// <summary>The largest number of threads, the leader included.</summary>
     public int Size { get; }
+
+    /// <summary>Turns a caller's wish into a number of threads: 0 stands for one a processor.</summary>
+    public static int SizeOf(int threads) => threads == 0 ? Environment.ProcessorCount : threads;
 
     /// <summary>Calls the helpers, which stay until the crew is dismissed.</summary>
     public void Gather()
@@ -53,9 +56,6 @@ internal sealed class Crew : IDisposable
         if ((session & 1) != 0)
             Interlocked.Increment(ref session);
     }
-
-    /// <inheritdoc/>
-    public void Dispose() => Dismiss();
 
     /// <summary>Does all blocks, and returns when the last one is done; the first exception of a block is passed on.</summary>
     public void Run(Work blocks, int count)

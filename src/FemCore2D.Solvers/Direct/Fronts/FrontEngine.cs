@@ -16,7 +16,7 @@ internal sealed unsafe partial class FrontEngine
     private readonly FactorStructure structure;
     private readonly EntryMap map;
     private readonly FrontArithmetic arithmetic;
-    private readonly FactorKind kind;
+    private FactorKind kind;
     private readonly Crew crew;
     private readonly FrontPlace[] places;
     private readonly AlignedDoubles arena;
@@ -25,11 +25,18 @@ internal sealed unsafe partial class FrontEngine
     private readonly Crew.Work subtreeWork;
     private double* values;
     private CancellationToken cancellationToken;
+    private readonly IProgress<double>? progress;
     private int failedColumn;
+    private int raisedPivots;
+    private int firstRaised;
+    private long doneWork;
+    private int reportedPercent;
 
     /// <summary>Allocates the memory of a factorization.</summary>
-    public FrontEngine(FrontPlan plan, EntryMap map, FactorKind kind, Crew crew)
+    public FrontEngine(FrontPlan plan, EntryMap map, FactorKind kind, Crew crew, IProgress<double>? progress = null)
     {
+        this.progress = progress;
+        Pivots = new PivotRecord(plan.Structure.Positions.Length, plan.Doubles, kind);
         this.plan = plan;
         this.map = map;
         this.kind = kind;
@@ -56,6 +63,30 @@ internal sealed unsafe partial class FrontEngine
     /// <summary>The doubles between the two sides of the factor.</summary>
     public long SideSize => sideSize;
 
+    /// <summary>Which product of triangles is computed; symmetric and Hermitian ones share their memory.</summary>
+    public FactorKind Kind
+    {
+        get => kind;
+        set => kind = value;
+    }
+
+    /// <summary>What the pivoting has done.</summary>
+    public PivotRecord Pivots { get; }
+
+    /// <summary>The diagonal of the matrix that a Cholesky factorization starts from.</summary>
+    public double[] Diagonals { get; set; } = [];
+
+    /// <summary>
+    /// The size that a pivot is raised to, where it is smaller; for Cholesky the share of the diagonal at which it fails.
+    /// </summary>
+    public double LeastPivot { get; set; }
+
+    /// <summary>The number of pivots that were raised.</summary>
+    public int RaisedPivots => raisedPivots;
+
+    /// <summary>The first column whose pivot was raised, or -1.</summary>
+    public int FirstRaised => firstRaised == int.MaxValue ? -1 : firstRaised;
+
     /// <summary>Computes the factor.</summary>
     /// <param name="matrixValues">The values of the matrix.</param>
     /// <param name="cancellation">Stops the work.</param>
@@ -65,6 +96,10 @@ internal sealed unsafe partial class FrontEngine
         values = matrixValues;
         cancellationToken = cancellation;
         failedColumn = int.MaxValue;
+        firstRaised = int.MaxValue;
+        raisedPivots = 0;
+        doneWork = 0;
+        reportedPercent = 0;
         crew.Gather();
         try
         {
@@ -75,6 +110,7 @@ internal sealed unsafe partial class FrontEngine
                     break;
                 cancellationToken.ThrowIfCancellationRequested();
                 top.Factorize(s);
+                Report(s);
             }
         }
         finally
@@ -95,7 +131,20 @@ internal sealed unsafe partial class FrontEngine
             cancellationToken.ThrowIfCancellationRequested();
             if (!FactorizeFront(s, s == root, place))
                 return;
+            Report(s);
         }
+    }
+
+    /// <summary>Tells the share of the work that is done, whenever another hundredth is.</summary>
+    private void Report(int s)
+    {
+        if (progress is null)
+            return;
+        long work = Interlocked.Add(ref doneWork, plan.Work[s]);
+        int percent = (int)(100.0 * work / plan.TotalWork);
+        int seen = Volatile.Read(ref reportedPercent);
+        if (percent > seen && Interlocked.CompareExchange(ref reportedPercent, percent, seen) == seen)
+            progress.Report(percent / 100.0);
     }
 
     private bool FactorizeFront(int s, bool isRoot, FrontPlace place)
@@ -265,25 +314,130 @@ internal sealed unsafe partial class FrontEngine
     private bool FactorizeBlock(int s, double* p, double* q, nint ld, int b, int n)
     {
         int rows = EndOfCorner(b + n) - b * doubles;
+        int first = structure.Tree.Starts[s] + b;
         double* corner = p + b * doubles + b * ld;
-        int failed = kind switch
+        if (kind == FactorKind.Cholesky)
         {
-            FactorKind.Cholesky => arithmetic.Cholesky(corner, ld, n, rows),
-            _ => throw new InvalidOperationException(),
-        };
-        if (failed < 0)
-            return true;
-        Fail(structure.Tree.Starts[s] + b + failed);
-        return false;
+            int failed = arithmetic.Cholesky(corner, ld, n, rows);
+            if (failed < 0)
+                failed = FindNegligible(corner, ld, n, first);
+            if (failed >= 0)
+                Fail(first + failed);
+            return failed < 0;
+        }
+
+        double* second = q + b * doubles + b * ld;
+        Span<int> order = Pivots.Order.AsSpan(first, n);
+        int perturbed = int.MaxValue;
+        int raised = kind == FactorKind.General
+            ? arithmetic.GeneralCorner(corner, second, ld, n, rows, LeastPivot, order, ref perturbed)
+            : arithmetic.SymmetricCorner(
+                corner, second, ld, n, rows, kind == FactorKind.Hermitian, LeastPivot, order,
+                Pivots.OffDiagonals.AsSpan(first * doubles, n * doubles), ref perturbed);
+        if (raised > 0)
+        {
+            Interlocked.Add(ref raisedPivots, raised);
+            Lower(ref firstRaised, first + perturbed);
+        }
+
+        MoveRows(p, ld, b, order);
+        int end = EndOfCorner(b + n);
+        MoveColumns((kind == FactorKind.General ? q : p) + end + b * ld, ld, (int)ld - end, order);
+        foreach (ref int place in order)
+            place += b;
+        return true;
+    }
+
+    /// <summary>Finds a pivot that is nothing but the rounding of the entries it came from, or -1.</summary>
+    private int FindNegligible(double* corner, nint ld, int n, int first)
+    {
+        for (int k = 0; k < n; k++)
+        {
+            double root = corner[k * doubles + k * ld];
+            if (root * root <= LeastPivot * Diagonals[structure.Tree.Order[first + k]])
+                return k;
+        }
+
+        return -1;
+    }
+
+    /// <summary>Puts the rows of a block left of its corner into the order of the pivots.</summary>
+    private void MoveRows(double* p, nint ld, int b, ReadOnlySpan<int> order)
+    {
+        if (b == 0 || IsAscending(order))
+            return;
+        double* copy = stackalloc double[2 * FrontArithmetic.BlockWidth];
+        for (int j = 0; j < b; j++)
+        {
+            double* column = p + b * doubles + j * ld;
+            new ReadOnlySpan<double>(column, order.Length * doubles)
+                .CopyTo(new Span<double>(copy, order.Length * doubles));
+            for (int k = 0; k < order.Length; k++)
+            {
+                for (int i = 0; i < doubles; i++)
+                    column[k * doubles + i] = copy[order[k] * doubles + i];
+            }
+        }
+    }
+
+    /// <summary>Puts the columns of a block below its corner into the order of the pivots.</summary>
+    private static void MoveColumns(double* p, nint ld, int rows, ReadOnlySpan<int> order)
+    {
+        if (rows == 0 || IsAscending(order))
+            return;
+        Span<int> held = stackalloc int[FrontArithmetic.BlockWidth];
+        for (int k = 0; k < order.Length; k++)
+            held[k] = k;
+        for (int k = 0; k < order.Length; k++)
+        {
+            int from = held[k..order.Length].IndexOf(order[k]) + k;
+            if (from == k)
+                continue;
+            (held[k], held[from]) = (held[from], held[k]);
+            double* a = p + k * ld;
+            double* c = p + from * ld;
+            for (int i = 0; i < rows; i++)
+                (a[i], c[i]) = (c[i], a[i]);
+        }
+    }
+
+    private static bool IsAscending(ReadOnlySpan<int> order)
+    {
+        for (int k = 0; k < order.Length; k++)
+        {
+            if (order[k] != k)
+                return false;
+        }
+
+        return true;
     }
 
     /// <summary>Solves some rows below the corner of a block.</summary>
     private void SolveBlock(int s, double* p, double* q, nint ld, int b, int n, int fromRow, int toRow)
     {
-        if (fromRow >= toRow)
+        int rows = toRow - fromRow;
+        if (rows <= 0)
             return;
-        double* corner = p + b * doubles + b * ld;
-        arithmetic.SolveRows(p + fromRow + b * ld, ld, toRow - fromRow, corner, ld, n, false, true);
+        double* lower = p + b * doubles + b * ld;
+        double* x = p + fromRow + b * ld;
+        switch (kind)
+        {
+            case FactorKind.Cholesky:
+                arithmetic.SolveRows(x, ld, rows, lower, ld, n, unit: false, conjugate: true);
+                break;
+            case FactorKind.General:
+                arithmetic.SolveRows(x, ld, rows, q + b * doubles + b * ld, ld, n, unit: false, conjugate: false);
+                arithmetic.SolveRows(q + fromRow + b * ld, ld, rows, lower, ld, n, unit: true, conjugate: false);
+                break;
+            default:
+                bool hermitian = kind == FactorKind.Hermitian;
+                int first = (structure.Tree.Starts[s] + b) * doubles;
+                arithmetic.SolveRows(x, ld, rows, lower, ld, n, unit: true, conjugate: hermitian);
+                arithmetic.DivideRows(
+                    x, q + fromRow + b * ld, ld, n, rows, lower,
+                    Pivots.OffDiagonals.AsSpan(first, n * doubles), hermitian);
+                break;
+        }
     }
 
     /// <summary>Subtracts the product of the rows below from a tile of the update.</summary>
@@ -309,12 +463,14 @@ internal sealed unsafe partial class FrontEngine
         }
     }
 
-    private void Fail(int column)
+    private void Fail(int column) => Lower(ref failedColumn, column);
+
+    private static void Lower(ref int least, int value)
     {
-        int seen = Volatile.Read(ref failedColumn);
-        while (column < seen)
+        int seen = Volatile.Read(ref least);
+        while (value < seen)
         {
-            int found = Interlocked.CompareExchange(ref failedColumn, column, seen);
+            int found = Interlocked.CompareExchange(ref least, value, seen);
             if (found == seen)
                 return;
             seen = found;

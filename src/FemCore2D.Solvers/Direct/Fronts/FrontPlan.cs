@@ -33,6 +33,7 @@ internal sealed class FrontPlan
         UpdateStrides = new int[count];
         UpdateStarts = new long[count];
         double[] work = new double[count];
+        Work = new long[count];
         for (int s = 0; s < count; s++)
         {
             long width = structure.Width(s);
@@ -50,6 +51,8 @@ internal sealed class FrontPlan
             flops += rows * (rows + 1.0) * (2.0 * rows + 1.0) / 6.0 - below * (below + 1.0) * (2.0 * below + 1.0) / 6.0;
             Flops += flops;
             work[s] = flops + MoveCost * rows * rows + FrontCost;
+            Work[s] = (long)work[s];
+            TotalWork += Work[s];
         }
 
         for (int s = 0; s < count; s++)
@@ -114,6 +117,12 @@ internal sealed class FrontPlan
     /// <summary>The multiplications and additions of one side, in the sense of a symmetric factorization.</summary>
     public double Flops { get; }
 
+    /// <summary>For each supernode an estimate of its work.</summary>
+    public long[] Work { get; }
+
+    /// <summary>The sum of these.</summary>
+    public long TotalWork { get; }
+
     /// <summary>The doubles between the two sides of an update.</summary>
     public long UpdateSize(int s) => (long)UpdateStrides[s] * Structure.BelowCount(s);
 
@@ -171,7 +180,6 @@ internal sealed class FrontPlan
                 heaviest.Enqueue(Children[i], (-work[Children[i]], Children[i]));
         }
 
-        // A light subtree goes along with its neighbours, so that no piece is too small.
         top.Sort();
         roots.Sort();
         (int First, int Root, double Work)[] pieces = new (int, int, double)[roots.Count];

@@ -15,7 +15,8 @@ internal sealed unsafe class FrontSolver
     private readonly FrontPlan plan;
     private readonly FactorStructure structure;
     private readonly FrontArithmetic arithmetic;
-    private readonly FactorKind kind;
+    private readonly FrontEngine engine;
+    private FactorKind kind;
     private readonly PivotRecord pivots;
     private readonly AlignedDoubles factor;
     private readonly long sideSize;
@@ -31,11 +32,11 @@ internal sealed unsafe class FrontSolver
     private bool transposed;
 
     /// <summary>Allocates a workspace.</summary>
-    public FrontSolver(FrontPlan plan, FactorKind kind, PivotRecord pivots, FrontEngine engine, Crew crew)
+    public FrontSolver(FrontPlan plan, FrontEngine engine, Crew crew)
     {
         this.plan = plan;
-        this.kind = kind;
-        this.pivots = pivots;
+        this.engine = engine;
+        pivots = engine.Pivots;
         this.crew = crew;
         structure = plan.Structure;
         doubles = plan.Doubles;
@@ -57,6 +58,7 @@ internal sealed unsafe class FrontSolver
     public void Solve(double* values, int count, bool transpose)
     {
         transposed = transpose;
+        kind = engine.Kind;
         long room = (long)Math.Min(count, MostColumns) * structure.Rows.Length * doubles;
         if (updates.Length < room)
             updates = GC.AllocateUninitializedArray<double>(checked((int)room));

@@ -1,5 +1,3 @@
-using System.Numerics;
-
 namespace FemCore2D.Solvers;
 
 /// <content>The corner block of a general matrix.</content>

@@ -41,7 +41,7 @@ internal static unsafe partial class PivotBlock<T>
         int step;
         for (int k = 0; k < n; k += step)
         {
-            step = Choose(a, Stride, k, n, hermitian, order);
+            step = Choose(a, Stride, k, n, hermitian, least, order);
             T* column = a + k * Stride;
             if (step == 1)
             {
@@ -70,7 +70,7 @@ internal static unsafe partial class PivotBlock<T>
     }
 
     /// <summary>Brings the next pivot to its place, and returns whether it has one column or two.</summary>
-    private static int Choose(T* a, int stride, int k, int n, bool hermitian, Span<int> order)
+    private static int Choose(T* a, int stride, int k, int n, bool hermitian, double least, Span<int> order)
     {
         T* column = a + k * stride;
         double diagonal = Size(column[k]);
@@ -86,7 +86,7 @@ internal static unsafe partial class PivotBlock<T>
             }
         }
 
-        if (diagonal >= Alpha * largest)
+        if (diagonal >= Alpha * largest || largest < least)
             return 1;
         double across = 0.0;
         for (int i = k; i < r; i++)
