@@ -18,6 +18,9 @@ public sealed unsafe partial class DirectFactorization<T> : IFactorization<T>
     /// <summary>Pivots below this, in a matrix scaled to entries of one, are raised to it.</summary>
     private const double LeastPivot = 1e-10;
 
+    /// <summary>A vector mapped to this many rounding units of the matrix's size counts as mapped to nothing.</summary>
+    private const double SingularRoundings = 50.0;
+
     private readonly FactorizationPlan<T> plan;
     private readonly FrontEngine engine;
     private readonly Crew crew;
@@ -93,11 +96,12 @@ public sealed unsafe partial class DirectFactorization<T> : IFactorization<T>
         valid = false;
         cancellationToken.ThrowIfCancellationRequested();
         Inspect(newMatrix);
+        cancellationToken.ThrowIfCancellationRequested();
         Span<T> values = newMatrix.Values;
         if (matrix is not null)
         {
             values.CopyTo(matrix.Values);
-            scaling!.Run(matrix, scaled);
+            scaling!.Run(matrix, scaled, cancellationToken);
             values = scaled;
         }
 
@@ -173,18 +177,23 @@ public sealed unsafe partial class DirectFactorization<T> : IFactorization<T>
             x[i] = Scalar.Create<T>(0.5 + state / 4294967296.0);
         }
 
+        // Inverse iteration with the factors finds the vector up to what raising the pivots has changed; correcting it by
+        // its own residual then leads to the vector of the matrix itself.
         double least = double.MaxValue;
+        SolveOnce(x, y, transposed: false);
         for (int step = 0; step < 4; step++)
         {
-            SolveOnce(x, y, transposed: false);
             double size = Norm(y);
             for (int i = 0; i < y.Length; i++)
                 x[i] = Scalar.Scale(y[i], 1.0 / size);
             Residual(default, x, y);
             least = Math.Min(least, Norm(y) / inspection.RowNorm);
+            SolveOnce(y, y, transposed: false);
+            for (int i = 0; i < y.Length; i++)
+                y[i] = x[i] - y[i];
         }
 
-        if (least > 8.0 * Rounding)
+        if (least > SingularRoundings * Rounding)
             return;
         valid = false;
         int unknown = 0;

@@ -31,7 +31,7 @@ internal sealed class MatrixScaling<T>
     public double[] Columns { get; }
 
     /// <summary>Finds the factors, and writes the scaled values.</summary>
-    public void Run(SparseMatrix<T> matrix, Span<T> scaled)
+    public void Run(SparseMatrix<T> matrix, Span<T> scaled, CancellationToken cancellationToken)
     {
         ReadOnlySpan<int> starts = matrix.Pattern.RowStarts;
         ReadOnlySpan<int> columns = matrix.Pattern.Columns;
@@ -40,6 +40,7 @@ internal sealed class MatrixScaling<T>
         Columns.AsSpan().Fill(1.0);
         for (int sweep = 0; sweep < Sweeps; sweep++)
         {
+            cancellationToken.ThrowIfCancellationRequested();
             rowLargest.AsSpan().Clear();
             columnLargest.AsSpan().Clear();
             for (int i = 0; i < Rows.Length; i++)

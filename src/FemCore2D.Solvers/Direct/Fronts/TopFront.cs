@@ -116,6 +116,7 @@ internal sealed unsafe partial class FrontEngine
             int column = tile / tileRows * engine.arithmetic.TileColumns;
             if ((row + FrontArithmetic.TileRows) / engine.doubles <= column)
                 return;
+            engine.cancellationToken.ThrowIfCancellationRequested();
             engine.UpdateTile(s, panel, second, update, row, column, Scratch(place));
         }
 
