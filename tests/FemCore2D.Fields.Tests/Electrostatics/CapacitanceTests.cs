@@ -95,6 +95,18 @@ public class CapacitanceTests
     }
 
     [Fact]
+    public void TheDirectFactorizationGivesTheSame()
+    {
+        Mesh mesh = Sections.ThreeWires();
+        CapacitanceMatrix iterated = Problem(mesh).SolveCapacitances(Wires);
+        CapacitanceMatrix direct = Problem(mesh).SolveCapacitances(
+            Wires, new SolveSettings { Factorizer = new DirectFactorizer<double>(FactorizationKind.Cholesky) });
+        Assert.Equal(
+            iterated.Maxwell("west", "middle"), direct.Maxwell("west", "middle"), 1e-9 * direct.Maxwell("west", "west"));
+        Assert.True(direct.Report.RelativeResidual < 1e-12);
+    }
+
+    [Fact]
     public void ThePlainTextNamesAllConductorsAndTheUnit()
     {
         string text = Problem(Sections.ThreeWires(0.5)).SolveCapacitances(Wires).ToString();
