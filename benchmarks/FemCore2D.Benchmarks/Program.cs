@@ -1,3 +1,7 @@
 using BenchmarkDotNet.Running;
+using FemCore2D.Benchmarks;
 
-BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);
+if (args is ["direct", .. string[] names])
+    DirectComparison.Run(names);
+else
+    BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);

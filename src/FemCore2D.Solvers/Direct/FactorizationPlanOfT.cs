@@ -91,8 +91,9 @@ public sealed class FactorizationPlan<T>
         cancellationToken.ThrowIfCancellationRequested();
         FrontPlan fronts = new(structure, Scalar.IsComplex<T>() ? 2 : 1, general ? 2 : 1, crew.Size);
         long bytes = PredictBytes(fronts, kind, pattern.EntryCount, crew.Size);
-        if (bytes > options.MaximumBytes)
-            throw new FactorTooLargeException(bytes, options.MaximumBytes);
+        long limit = Math.Min(options.MaximumBytes, sizeof(double) * AlignedDoubles.MostDoubles);
+        if (bytes > limit)
+            throw new FactorTooLargeException(bytes, limit);
         EntryMap map = new(pattern, structure, general);
         return new FactorizationPlan<T>(
             pattern, kind, options, ordering, fronts, map,

@@ -21,7 +21,9 @@ internal sealed class FactorStructure
             RowStarts[s + 1] = RowStarts[s] + tree.RowCounts[s] - width;
         }
 
-        Rows = GC.AllocateUninitializedArray<int>(checked((int)RowStarts[count]));
+        if (RowStarts[count] > Array.MaxLength)
+            throw new FactorTooLargeException(sizeof(int) * RowStarts[count], sizeof(int) * (long)Array.MaxLength);
+        Rows = GC.AllocateUninitializedArray<int>((int)RowStarts[count]);
         ParentPlaces = GC.AllocateUninitializedArray<int>(Rows.Length);
         FillRows(graph);
         FillPlaces();

@@ -59,17 +59,18 @@ internal sealed unsafe class FrontSolver
     {
         transposed = transpose;
         kind = engine.Kind;
-        long room = (long)Math.Min(count, MostColumns) * structure.Rows.Length * doubles;
+        int together = Math.Clamp(Array.MaxLength / Math.Max(1, structure.Rows.Length * doubles), 1, MostColumns);
+        int room = Math.Min(count, together) * structure.Rows.Length * doubles;
         if (updates.Length < room)
-            updates = GC.AllocateUninitializedArray<double>(checked((int)room));
-        bool together = crew.Size > 1 && plan.FactorEntries > 200_000;
-        if (together)
+            updates = GC.AllocateUninitializedArray<double>(room);
+        bool parallel = crew.Size > 1 && plan.FactorEntries > 200_000;
+        if (parallel)
             crew.Gather();
-        for (int first = 0; first < count; first += MostColumns)
+        for (int first = 0; first < count; first += together)
         {
             solution = values + (long)first * Size;
-            columns = Math.Min(MostColumns, count - first);
-            Pass(together);
+            columns = Math.Min(together, count - first);
+            Pass(parallel);
         }
 
         crew.Dismiss();
@@ -78,9 +79,9 @@ internal sealed unsafe class FrontSolver
 
     private int Size => structure.Positions.Length * doubles;
 
-    private void Pass(bool together)
+    private void Pass(bool parallel)
     {
-        if (together)
+        if (parallel)
             crew.Run(forward, plan.Subtrees.Length);
         else
             Sequentially(forward);
@@ -88,7 +89,7 @@ internal sealed unsafe class FrontSolver
             Forward(s, 0);
         for (int i = plan.TopNodes.Length - 1; i >= 0; i--)
             Backward(plan.TopNodes[i], 0);
-        if (together)
+        if (parallel)
             crew.Run(backward, plan.Subtrees.Length);
         else
             Sequentially(backward);
