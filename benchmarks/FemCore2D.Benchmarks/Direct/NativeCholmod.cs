@@ -39,8 +39,16 @@ internal static unsafe partial class NativeCholmod
             // Rows of a symmetric matrix are its columns; the upper triangle is used.
             CholmodSparse matrix = new()
             {
-                Rows = n, Columns = n, Room = columns.Length, Starts = p, Indices = i, Values = v, Side = 1, NumberType = 1,
-                Sorted = 1, Packed = 1,
+                Rows = n,
+                Columns = n,
+                Room = columns.Length,
+                Starts = p,
+                Indices = i,
+                Values = v,
+                Side = 1,
+                NumberType = 1,
+                Sorted = 1,
+                Packed = 1,
             };
             CholmodDense rightHandSide = new() { Rows = n, Columns = 1, Room = n, Stride = n, Values = right, NumberType = 1 };
             long start = Stopwatch.GetTimestamp();
